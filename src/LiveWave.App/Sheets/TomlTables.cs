@@ -1,0 +1,40 @@
+using LiveWave.Pipeline;
+using Tomlyn;
+using Tomlyn.Parsing;
+using Tomlyn.Syntax;
+
+namespace LiveWave.App;
+
+/// <summary>Turns TOML 1.1 text into tables that know their lines.</summary>
+internal static class TomlTables
+{
+    /// <summary>Parses a text.</summary>
+    /// <param name="text">TOML.</param>
+    /// <param name="faults">Breaches of TOML, the first of each line; empty where there are none.</param>
+    /// <returns>The tables; to be used only where there are no faults.</returns>
+    public static ParsedTable Parse(string text, out IReadOnlyList<SheetFault> faults)
+    {
+        var root = new ParsedTable(line: 1);
+        try
+        {
+            var document = SyntaxParser.Parse(text, sourceName: null, validate: true);
+            faults = [.. document.Diagnostics.Where(IsError).Select(FaultOf).DistinctBy(fault => fault.Line).OrderBy(fault => fault.Line)];
+            if (faults.Count == 0) faults = new TomlTree(root).Fill(document);
+        }
+        catch (TomlException e)
+        {
+            // Nesting beyond the parser's bound is thrown, not reported.
+            faults = [new((e.Line ?? 0) + 1, "", "not valid TOML: " + OneLine(e.Message), "")];
+        }
+
+        return root;
+    }
+
+    private static bool IsError(DiagnosticMessage message) => message.Kind == DiagnosticMessageKind.Error;
+
+    private static SheetFault FaultOf(DiagnosticMessage message) =>
+        new(Math.Max(0, message.Span.Start.Line) + 1, "", "not valid TOML: " + OneLine(message.Message), "");
+
+    /// <summary>Messages quote the sheet, which may hold anything.</summary>
+    private static string OneLine(string message) => string.Concat(message.Select(c => char.IsControl(c) ? ' ' : c)).Trim();
+}
