@@ -27,12 +27,13 @@ internal sealed class XdfDescription
     {
     }
 
-    /// <summary>Text of a header or footer: UTF-8, without a byte order mark in front, blanks or NUL around it.</summary>
+    /// <summary>Text of a header or footer: UTF-8, without a byte order mark in front, blanks or NUL around it; other
+    /// control characters become question marks.</summary>
     /// <param name="bytes">As they lie in the file.</param>
     public static string Text(ReadOnlySpan<byte> bytes)
     {
         if (bytes.StartsWith((ReadOnlySpan<byte>)[0xEF, 0xBB, 0xBF])) bytes = bytes[3..];
-        return Encoding.UTF8.GetString(bytes.Trim("\0 \t\r\n"u8));
+        return Legal(Encoding.UTF8.GetString(bytes.Trim("\0 \t\r\n"u8)));
     }
 
     /// <summary>Reads a description.</summary>
@@ -59,6 +60,12 @@ internal sealed class XdfDescription
     public static StreamDescription Unread(uint id, string problem) =>
         new(Key(id), "", "", 0, double.NaN, "", null, [], problem);
 
+    // Control characters are illegal in XML, but occur in names; they must not cost the stream.
+    private static string Legal(string text) => string.Create(text.Length, text, static (to, from) =>
+    {
+        for (var i = 0; i < to.Length; i++) to[i] = char.IsControl(from[i]) && from[i] is not ('\t' or '\r' or '\n') ? '?' : from[i];
+    });
+
     private static string Key(uint id) => "#" + id.ToString(CultureInfo.InvariantCulture);
 
     private void Parse(string text)
@@ -69,7 +76,7 @@ internal sealed class XdfDescription
             XmlResolver = null,
             MaxCharactersInDocument = MostBytes,
             MaxCharactersFromEntities = 1024,
-            CheckCharacters = false,      // control characters in names are illegal and occur
+            CheckCharacters = false,      // the same as character references
             IgnoreComments = true,
             IgnoreProcessingInstructions = true,
         };
