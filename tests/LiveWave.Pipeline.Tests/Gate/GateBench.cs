@@ -13,11 +13,12 @@ internal sealed class GateBench : IDisposable
         bool mayBeArmed = true,
         bool isDummy = false,
         double patienceMs = 1000,
-        Func<VirtualClock, IClock>? seenAs = null)
+        Func<VirtualClock, IClock>? seenAs = null,
+        bool recorded = true)
     {
         Gate = new PulseGate(
             [
-                new GateOutput("a", A) { PatienceMs = patienceMs, IsDummy = isDummy },
+                new GateOutput("a", recorded ? A : new NoOutput()) { PatienceMs = patienceMs, IsDummy = isDummy },
                 new GateOutput("b", B) { PatienceMs = patienceMs, IsDummy = isDummy },
             ],
             seenAs?.Invoke(Clock) ?? Clock,
