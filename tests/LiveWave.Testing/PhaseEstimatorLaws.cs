@@ -188,10 +188,6 @@ public abstract class PhaseEstimatorLaws
         Assert.Equal(now.At, then.At);
     }
 
-    /// <summary>A stream of the law's rate.</summary>
-    protected static StreamFormat Format(int channelCount) => new(
-        "laws", RateHz, WireFormat.Float64, [.. Enumerable.Range(0, channelCount).Select(i => new ChannelFormat($"c{i}", "microvolts"))]);
-
     private static void Run(IPhaseEstimator estimator, double[][] rows, Phasors phasors)
     {
         foreach (var row in rows)
@@ -201,23 +197,7 @@ public abstract class PhaseEstimatorLaws
         }
     }
 
-    // Different in every channel, with a rhythm, an offset and something irregular: a counter-based hash needs no state.
-    private static double[][] Rows(int count)
-    {
-        var rows = new double[count][];
-        for (var row = 0; row < count; row++)
-        {
-            rows[row] = new double[ChannelCount];
-            for (var channel = 0; channel < ChannelCount; channel++)
-            {
-                var hash = unchecked(((uint)((row * ChannelCount) + channel) + 1) * 2654435761u);
-                var noise = (hash / (double)uint.MaxValue) - 0.5;
-                rows[row][channel] = (100 * channel) + (10 * Math.Cos((2 * Math.PI * 0.0101 * row) + channel)) + (5 * noise);
-            }
-        }
-
-        return rows;
-    }
+    private static double[][] Rows(int count) => Signals.Recording(7, RateHz, count, ChannelCount);
 
     private static double Radians(int channel, double row) => (2 * Math.PI * Band.CentreHz / RateHz * row) + (0.5 * channel);
 
@@ -271,7 +251,7 @@ public abstract class PhaseEstimatorLaws
     private IPhaseEstimator Prepared()
     {
         var estimator = Create();
-        estimator.Prepare(Format(ChannelCount), Band, Calibration(ChannelCount));
+        estimator.Prepare(Signals.Format(RateHz, ChannelCount), Band, Calibration(ChannelCount));
         return estimator;
     }
 }

@@ -1,4 +1,5 @@
 using LiveWave.Abstractions;
+using LiveWave.Testing;
 
 namespace LiveWave.Dsp.Tests;
 
@@ -100,13 +101,13 @@ public sealed class BandpassQuadratureEstimatorTests
         Assert.Throws<ArgumentOutOfRangeException>(() => new BandpassQuadratureEstimator(9));
         Assert.Throws<ArgumentOutOfRangeException>(() => _estimator.Predict(19, _now));
         Assert.Throws<RefusedException>(() => new BandpassQuadratureEstimator().Prepare(
-            PhaseModels.Format(1000, 1), Band with { HorizonSamples = [0, -1] }, Calibration.None("A", "alpha")));
+            Signals.Format(1000, 1), Band with { HorizonSamples = [0, -1] }, Calibration.None("A", "alpha")));
     }
 
     private void Prepare(BandpassQuadratureEstimator estimator)
     {
         _estimator = estimator;
-        _estimator.Prepare(PhaseModels.Format(1000, 1), Band, Calibration.None("A", "alpha"));
+        _estimator.Prepare(Signals.Format(1000, 1), Band, Calibration.None("A", "alpha"));
     }
 
     private void Give(int rows)

@@ -1,4 +1,5 @@
 using LiveWave.Abstractions;
+using LiveWave.Testing;
 
 namespace LiveWave.Dsp.Tests;
 
@@ -40,7 +41,7 @@ public sealed class OscillatorEstimatorTests
     {
         var fresh = new OscillatorEstimator();
         Prepare(PhaseModels.Alpha);
-        fresh.Prepare(PhaseModels.Format(1000, 2), Band, PhaseModels.Calibration(PhaseModels.Alpha));
+        fresh.Prepare(Signals.Format(1000, 2), Band, PhaseModels.Calibration(PhaseModels.Alpha));
         Give(2000);
         Lose(1001);
         Assert.Equal(0, _now.Re[0]);
@@ -155,7 +156,7 @@ public sealed class OscillatorEstimatorTests
     }
 
     private void Prepare(PhaseModel? model, params double[] scales) =>
-        _estimator.Prepare(PhaseModels.Format(1000, 2), Band, PhaseModels.Calibration(model, scales));
+        _estimator.Prepare(Signals.Format(1000, 2), Band, PhaseModels.Calibration(model, scales));
 
     private void Give(int rows)
     {

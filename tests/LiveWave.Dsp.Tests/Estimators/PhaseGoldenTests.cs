@@ -1,4 +1,5 @@
 using LiveWave.Abstractions;
+using LiveWave.Testing;
 
 namespace LiveWave.Dsp.Tests;
 
@@ -83,7 +84,7 @@ public sealed class PhaseGoldenTests
     private static void AssertEstimator(
         PhaseVectors vectors, IPhaseEstimator estimator, PhaseCase model, double[] samples, int horizon, string column)
     {
-        estimator.Prepare(PhaseModels.Format(model.RateHz, 1), model.Band, PhaseModels.Calibration(model.Model));
+        estimator.Prepare(Signals.Format(model.RateHz, 1), model.Band, PhaseModels.Calibration(model.Model));
         var phasors = new Phasors(1);
         var (re, im) = (new double[samples.Length], new double[samples.Length]);
 

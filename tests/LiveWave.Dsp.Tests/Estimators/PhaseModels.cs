@@ -19,10 +19,6 @@ internal static class PhaseModels
     internal static Calibration Calibration(PhaseModel? model, params double[] scales) =>
         new() { Patch = "A", Band = "alpha", PhaseModel = model, ChannelScale = scales };
 
-    /// <summary>A stream.</summary>
-    internal static StreamFormat Format(double rateHz, int channelCount) => new(
-        "test", rateHz, WireFormat.Float64, [.. Enumerable.Range(0, channelCount).Select(i => new ChannelFormat($"c{i}", "microvolts"))]);
-
     private static OscillatorTerm Oscillator(double centreHz, double widthHz, double variance, bool isTarget)
     {
         var modulus = Math.Exp(-Math.PI * widthHz / 1000);
