@@ -102,6 +102,17 @@ internal sealed class ArrayGeometry
     public (double X, double Y) ToPlane(double first, double second) =>
         Rank == 2 ? (first, second) : (first * AxisX, first * AxisY);
 
+    /// <summary>k·x at the good channels, radians. Allocates.</summary>
+    /// <param name="waveVector">Coordinates, rad/mm.</param>
+    public double[] Phases((double First, double Second) waveVector)
+    {
+        var phases = new double[ChannelCount];
+        var along = Coordinate(0);
+        var across = Coordinate(Rank - 1);
+        for (var i = 0; i < phases.Length; i++) phases[i] = waveVector.First * along[i] + waveVector.Second * across[i];
+        return phases;
+    }
+
     private static RefusedException Refused(string what, string advice) => new(what, "layout", advice);
 
     private static (double[] X, double[] Y) Centred(Layout layout, int[] channels)

@@ -51,7 +51,7 @@ public sealed class PlanarEstimator(PlanarOptions options) : IWaveEstimator
         var whitening = new Whitening(calibration.Noise, geometry.ChannelCount);
         _frame = new WhitenedFrame(geometry.Channels, Scales(layout, calibration, geometry.Channels), whitening);
         _grid = geometry.HalfGrid;
-        _bank = new TemplateBank(whitening, Array.ConvertAll(_grid, k => Phases(geometry, k)));
+        _bank = new TemplateBank(whitening, Array.ConvertAll(_grid, geometry.Phases));
         (_fromGrid, _fromUniform) = (new PlaneFit(geometry), new PlaneFit(geometry));
         _frequency = new LocalFrequency(geometry.ChannelCount, format.NominalRateHz, band.HighHz);
         _result = new PlanarResult(geometry, layout.RotationDegrees, options);
@@ -95,15 +95,6 @@ public sealed class PlanarEstimator(PlanarOptions options) : IWaveEstimator
 
     /// <inheritdoc/>
     public void Reset() => _frequency?.Reset();
-
-    private static double[] Phases(ArrayGeometry geometry, (double First, double Second) k)
-    {
-        var phases = new double[geometry.ChannelCount];
-        var along = geometry.Coordinate(0);
-        var across = geometry.Coordinate(geometry.Rank - 1);
-        for (var i = 0; i < phases.Length; i++) phases[i] = k.First * along[i] + k.Second * across[i];
-        return phases;
-    }
 
     private static double[] Scales(Layout layout, Calibration calibration, int[] channels)
     {
