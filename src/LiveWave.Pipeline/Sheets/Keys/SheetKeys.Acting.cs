@@ -28,7 +28,9 @@ public static partial class SheetKeys
         Number("rule.shamFraction", "", "Share of matches for which by lot no pulse is sent", usual: 0, low: 0, high: 1),
         Whole("rule.code", "The pulse's code", usual: 1, high: 65_535),
         Texts("rule.outputs", "Names of the outputs that its pulses go to", otherwise: "none: it only decides"),
-        NotYet("rule.permit", SheetKeyType.Table, "What must hold besides the wave, as { after = \"stimulus-on\", fromMs = 200, toMs = 700 }"),
+        NotYet(
+            "rule.permit", SheetKeyType.Options,
+            "What must hold besides the wave, as { after = \"stimulus-on\", fromMs = 200, toMs = 700 }"),
         NotYet("rule.phaseDegrees", SheetKeyType.Number, "Phase at a site at which the pulse must land", "degrees"),
         NotYet("rule.phaseToleranceDegrees", SheetKeyType.Number, "Half the width of the phase allowed", "degrees"),
         NotYet("rule.phaseSite", SheetKeyType.Text, "The channel whose phase is meant"),

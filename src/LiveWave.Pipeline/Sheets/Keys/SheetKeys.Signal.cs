@@ -67,16 +67,16 @@ public static partial class SheetKeys
         Number("band.wave.everyMs", "ms", "From reading to reading, at least one row", usual: 4, low: 0, high: 1000, above: true),
         Number(
             "band.wave.gainOverUniform", "", "Smallest logarithmic gain of the wave over a uniform field",
-            usual: 6, low: 0, high: 1000),
+            usual: 6, low: 0.5, high: 50),
         Number(
             "band.wave.gainOutOfPhase", "", "Smallest logarithmic gain of its out-of-phase part over any field in phase",
             usual: 4, low: 0, high: 1000),
         Number(
             "band.wave.shortestWavelengthMm", "mm", "Shortest wavelength that is looked for",
-            otherwise: "what the layout resolves", low: 0, above: true),
+            otherwise: "the larger of 2.5 pitches and half the aperture", low: 0, high: 1_000_000, above: true),
         Number(
-            "band.wave.slowestWaveMetresPerSecond", "m/s", "Slowest wave of interest; a frame without any is called synchronous",
-            otherwise: "no frame is called synchronous", low: 0, above: true),
+            "band.wave.slowestWaveMetresPerSecond", "m/s", "Slowest wave of interest; a uniform field that excludes it is called synchronous",
+            otherwise: "no frame is called synchronous", low: 0, high: 1000, above: true),
         NotYet("band.wave.either", SheetKeyType.Text, "The other estimator whose events are joined with this one's"),
     ];
 

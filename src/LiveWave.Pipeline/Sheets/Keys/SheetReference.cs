@@ -6,10 +6,10 @@ namespace LiveWave.Pipeline;
 /// <summary>The key table as people read it: in <c>--help</c> and in the README.</summary>
 public static class SheetReference
 {
-    private const int KeyWidth = 30;
-    private const int TakesWidth = 34;
-    private const int UsualWidth = 22;
-    private const int MeaningWidth = 56;
+    private const int KeyWidth = 28;
+    private const int TakesWidth = 38;
+    private const int UsualWidth = 26;
+    private const int MeaningWidth = 52;
 
     /// <summary>The whole reference as plain text: a section for each table, in it a line for each key with what it takes, what counts
     /// where the sheet says nothing, and what it means.</summary>
@@ -60,7 +60,7 @@ public static class SheetReference
             for (var column = 0; column < cells.Length; column++)
             {
                 var cell = row < cells[column].Length ? cells[column][row] : "";
-                _ = line.Append(cell.PadRight(widths[column])).Append(' ');
+                _ = line.Append(cell.PadRight(widths[column])).Append("  ");
             }
 
             _ = text.Append(line.ToString().TrimEnd()).Append('\n');

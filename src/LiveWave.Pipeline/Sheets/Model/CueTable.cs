@@ -1,6 +1,7 @@
 namespace LiveWave.Pipeline;
 
-/// <summary>A <c>[[cue]]</c> table: a marker or a line that comes in from the task. Not built yet: a sheet that has one is refused.</summary>
+/// <summary>A <c>[[cue]]</c> table: a marker or a line that comes in from the task.</summary>
+/// <remarks>Not built yet: a sheet that has one is refused.</remarks>
 public sealed record CueTable
 {
     /// <summary>How the cue is called.</summary>

@@ -15,7 +15,7 @@ public sealed record WaveTable
     /// <summary>Smallest logarithmic gain of its out-of-phase part over any field in phase at which a frame counts.</summary>
     public required double GainOutOfPhase { get; init; }
 
-    /// <summary>Shortest wavelength looked for, mm; NaN: what the layout can resolve.</summary>
+    /// <summary>Shortest wavelength looked for, mm; NaN: the larger of 2.5 pitches and half the aperture.</summary>
     public required double ShortestWavelengthMm { get; init; }
 
     /// <summary>Slowest wave of interest, m/s; NaN: not stated, and then no frame is called synchronous.</summary>

@@ -1,6 +1,6 @@
 namespace LiveWave.Pipeline;
 
-/// <summary>Holds a parsed sheet against the key table: unknown keys, keys that are not built, missing keys, types, ranges, words.</summary>
+/// <summary>Holds a parsed sheet against the key table: keys unknown, not built or missing, types, ranges, words.</summary>
 internal sealed class SheetChecker(List<SheetFault> faults)
 {
     /// <summary>Checks a table and everything in it.</summary>
@@ -27,7 +27,7 @@ internal sealed class SheetChecker(List<SheetFault> faults)
 
     private void RefuseStrange(string tablePath, string name, ParsedValue value)
     {
-        var path = SheetKeys.Join(tablePath, name);
+        var path = SheetKeys.Join(tablePath, SheetValues.Plain(name));
         if (SheetKeys.Find(path) is { } key)
         {
             if (key.IsBuilt) return;
@@ -98,16 +98,14 @@ internal sealed class SheetChecker(List<SheetFault> faults)
         {
             if (key.Words.Contains(text, StringComparer.Ordinal)) return text;
             if (key.WordsNotYet.Contains(text, StringComparer.Ordinal)) return Refuse(key, value, $"'{text}' is not yet built");
-            return Refuse(
-                key, value, $"{SheetValues.Quoted(text)} is not known", Spelling.Hint(text, key.Words.Concat(key.WordsNotYet)) + Advice(key));
+            var hint = Spelling.Hint(text, key.Words.Concat(key.WordsNotYet));
+            return Refuse(key, value, $"{SheetValues.Quoted(text)} is not known", hint + Advice(key));
         }
 
         // Only what may be empty (notes) may have several lines; the rest are names and paths of others.
         if (key.Default is "") return text;
-        if (text.Length == 0) return Refuse(key, value, "it is empty", otherwise(key));
+        if (text.Length == 0) return Refuse(key, value, "it is empty", key.IsRequired ? "give a text" : "give a text, or leave it out");
         return text.Any(char.IsControl) ? Refuse(key, value, "it holds a control character") : text;
-
-        static string otherwise(SheetKey key) => key.IsRequired ? "give a text" : "give a text, or leave it out";
     }
 
     private string[]? CheckTexts(SheetKey key, ParsedValue value, IReadOnlyList<ParsedValue> list)
@@ -144,8 +142,14 @@ internal sealed class SheetChecker(List<SheetFault> faults)
         {
             var content = value.Content is long whole ? (double)whole : value.Content;
             var isRight = content is double number ? SheetValues.IsInRange(key, number) : !wanted && content is string or bool;
-            if (content is not null && isRight && SheetValues.IsName(name)) found.Add(name, content);
-            else faults.Add(new(value.Line, SheetKeys.Join(key.Path, name), $"it is {value.Described}{SheetValues.Shown(content)}", Advice(key)));
+            if (content is not null && isRight && SheetValues.IsName(name))
+            {
+                found.Add(name, content);
+                continue;
+            }
+
+            var what = isRight ? "its key is no name" : $"it is {value.Described}{SheetValues.Shown(content)}";
+            faults.Add(new(value.Line, SheetKeys.Join(key.Path, SheetValues.Plain(name)), what, Advice(key)));
         }
 
         return found.Count == entries.Entries.Count ? found : null;

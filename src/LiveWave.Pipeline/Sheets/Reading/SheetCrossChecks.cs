@@ -43,13 +43,17 @@ internal sealed class SheetCrossChecks(List<SheetFault> faults)
 
         if (channels.Count > streamChannels)
         {
-            Fault(patch, "channels", $"it names {channels.Count} channels and the stream has {streamChannels}", "name fewer, or correct stream.channels");
+            Fault(
+                patch, "channels", $"it names {channels.Count} channels and the stream has {streamChannels}",
+                "name fewer, or correct stream.channels");
         }
 
         foreach (var bad in patch.Texts("badChannels"))
         {
             if (channels.Count == 0 || channels.Contains(bad, StringComparer.Ordinal)) continue;
-            Fault(patch, "badChannels", $"{SheetValues.Quoted(bad)} is not a channel of this patch", Spelling.Hint(bad, channels) + "name labels of its channels");
+            Fault(
+                patch, "badChannels", $"{SheetValues.Quoted(bad)} is not a channel of this patch",
+                Spelling.Hint(bad, channels) + "name labels of its channels");
         }
     }
 
@@ -78,12 +82,12 @@ internal sealed class SheetCrossChecks(List<SheetFault> faults)
 
     private void CheckRule(CheckedTable rule, CheckedTable sheet)
     {
-        RefuseUnless(rule, "patch", rule.Text("patch"), sheet.Tables("patch"), "name");
-        RefuseUnless(rule, "band", rule.Text("band"), sheet.Tables("band"), "name");
-        foreach (var output in rule.Texts("outputs")) RefuseUnless(rule, "outputs", output, sheet.Tables("output"), "name");
+        RefuseUnless(rule, "patch", rule.Text("patch"), sheet, "patch", "name");
+        RefuseUnless(rule, "band", rule.Text("band"), sheet, "band", "name");
+        foreach (var output in rule.Texts("outputs")) RefuseUnless(rule, "outputs", output, sheet, "output", "name");
         if (sheet.Tables("band").FirstOrDefault(b => b.Text("name") == rule.Text("band")) is { } band)
         {
-            RefuseUnless(rule, "wave", rule.Text("wave"), band.Tables("wave"), "estimator");
+            RefuseUnless(rule, "wave", rule.Text("wave"), band, "wave", "estimator");
         }
 
         foreach (var (one, other) in (ReadOnlySpan<(string, string)>)
@@ -122,12 +126,15 @@ internal sealed class SheetCrossChecks(List<SheetFault> faults)
         }
     }
 
-    private void RefuseUnless(CheckedTable table, string key, string? text, IReadOnlyList<CheckedTable> among, string name)
+    /// <summary>Refuses a text that is not the name of one of the tables in a list.</summary>
+    private void RefuseUnless(CheckedTable table, string key, string? text, CheckedTable owner, string list, string name)
     {
+        var among = owner.Tables(list);
         var names = among.Select(t => t.Text(name)).OfType<string>().ToArray();
+        if (text is null || names.Contains(text, StringComparer.Ordinal)) return;
 
-        // Where one of the names themselves was refused, it may be the one that is meant.
-        if (text is null || names.Contains(text, StringComparer.Ordinal) || names.Length < among.Count) return;
+        // Where a name, or the whole list, was refused itself, it may be the one that is meant.
+        if (names.Length < among.Count || (among.Count == 0 && owner.Wrote(list))) return;
         var advice = names.Length == 0 ? "there is none in this sheet" : "allowed: " + string.Join(", ", names);
         Fault(table, key, $"there is no {SheetValues.Quoted(text)}", Spelling.Hint(text, names) + advice);
     }

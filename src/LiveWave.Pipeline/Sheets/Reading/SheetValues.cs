@@ -5,6 +5,8 @@ namespace LiveWave.Pipeline;
 /// <summary>What single values of a sheet may be, and how messages write them.</summary>
 internal static class SheetValues
 {
+    private const int LongestShown = 60;
+
     /// <summary>A name may stand in file names, tables and on one line of a screen.</summary>
     public static bool IsName(string name) =>
         name.Length is >= 1 and <= 60
@@ -19,10 +21,13 @@ internal static class SheetValues
     public static string Written(double number) => number.ToString("R", CultureInfo.InvariantCulture);
 
     /// <summary>A text on one line, cut short.</summary>
-    public static string Quoted(string text)
+    public static string Quoted(string text) => $"'{Plain(text)}'";
+
+    /// <summary>A text on one line, cut short, without quotes.</summary>
+    public static string Plain(string text)
     {
-        var shown = string.Concat(text.Take(40).Select(c => char.IsControl(c) ? '·' : c));
-        return text.Length > 40 ? $"'{shown}...'" : $"'{shown}'";
+        var shown = string.Concat(text.Take(LongestShown).Select(c => char.IsControl(c) ? '·' : c));
+        return text.Length > LongestShown ? shown + "..." : shown;
     }
 
     /// <summary>A number behind what it is, for messages; nothing for other values.</summary>
