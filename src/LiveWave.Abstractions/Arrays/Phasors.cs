@@ -25,7 +25,8 @@ public sealed class Phasors
     /// <summary>Number of channels.</summary>
     public int ChannelCount { get; }
 
-    /// <summary>The row; set by the host before each step. For a prediction: the row from which it was made.</summary>
+    /// <summary>The row; set by the host before each step, its index counted in rows of the analysis rate. For a prediction: the
+    /// row from which it was made.</summary>
     public RowInstant At { get; set; }
 
     /// <summary>Real parts: the rhythm's share of each channel's value, in the channel's unit.</summary>

@@ -1,0 +1,80 @@
+using System.CommandLine;
+
+namespace LiveWave.App;
+
+/// <summary>The options that <c>demo</c> and <c>watch</c> share.</summary>
+internal sealed class CommonOptions
+{
+    private const int MostBlockRows = 1_000_000;
+
+    private readonly Option<double?> _seconds = new("--seconds")
+    {
+        Description = "Judge so many seconds of the stream, then end. Everything, if not given.",
+        HelpName = "N",
+    };
+
+    private readonly Option<string> _clock = new("--clock")
+    {
+        Description = "'real' plays at the pace of the recording, 'fast' as fast as it can be judged. Decisions are the same.",
+        DefaultValueFactory = _ => "fast",
+    };
+
+    private readonly Option<int> _blockRows = new("--block-rows")
+    {
+        Description = "Rows in a block, as an amplifier would deliver them. Decisions are the same.",
+        DefaultValueFactory = _ => 20,
+        HelpName = "N",
+    };
+
+    private readonly Option<string?> _out = new("--out")
+    {
+        Description = "The session folder: absent or empty. A new one in the sheet's record folder, if not given.",
+        HelpName = "DIR",
+    };
+
+    private readonly Option<bool> _json = new("--json") { Description = "Print the summary as JSON." };
+
+    private readonly Option<string> _view = new("--view")
+    {
+        Description = "What to look at while it runs: 'none' so far.",
+        DefaultValueFactory = _ => "none",
+    };
+
+    public CommonOptions()
+    {
+        _clock.AcceptOnlyFromAmong("real", "fast");
+        _view.AcceptOnlyFromAmong("none");
+        _seconds.Validators.Add(result =>
+        {
+            if (result.GetValueOrDefault<double?>() is { } seconds && !(seconds > 0 && double.IsFinite(seconds))) result.AddError("--seconds must be above 0");
+        });
+        _blockRows.Validators.Add(result =>
+        {
+            if (result.GetValueOrDefault<int>() is < 1 or > MostBlockRows) result.AddError($"--block-rows must be from 1 to {MostBlockRows}");
+        });
+    }
+
+    public Option<string?> SessionId { get; } = new("--session-id")
+    {
+        Description = "Repeats a session's lots, for a re-run. A new one from name and time, if not given.",
+        HelpName = "ID",
+    };
+
+    public void AddTo(Command command)
+    {
+        foreach (var option in (Option[])[_seconds, _clock, _blockRows, _out, _json, _view, SessionId]) command.Options.Add(option);
+    }
+
+    public WatchOptions Read(ParseResult parsed, string verb, string sheet, string? from) => new()
+    {
+        Verb = verb,
+        SheetPath = sheet,
+        From = from,
+        Seconds = parsed.GetValue(_seconds) ?? double.NaN,
+        IsRealClock = parsed.GetValue(_clock) == "real",
+        BlockRows = parsed.GetValue(_blockRows),
+        Out = parsed.GetValue(_out),
+        Json = parsed.GetValue(_json),
+        SessionId = parsed.GetValue(SessionId),
+    };
+}

@@ -1,0 +1,84 @@
+using System.Globalization;
+using LiveWave.Abstractions;
+using LiveWave.Pipeline;
+using LiveWave.Recordings;
+
+namespace LiveWave.App;
+
+/// <summary>The verb <c>watch</c>, and <c>demo</c> on bundled files: plays a recording through the pipeline, rehearsing.</summary>
+internal static class WatchVerb
+{
+    private static readonly TimeSpan Turn = TimeSpan.FromMilliseconds(500);
+
+    /// <exception cref="RefusedException">Sheet, recording, layout or calibration can't be used.</exception>
+    public static int Run(WatchOptions options)
+    {
+        var sheet = SheetReader.Read(options.SheetPath);
+        var recording = options.From ?? RecordingOf(sheet);
+        var file = RecordingFile.Open(recording);
+        using var feed = file.OpenFeed(sheet.Stream.Name);
+        SheetFit.Check(sheet, feed.Format, recording);
+        using var wiring = WatchWiring.Make(sheet, feed, FirstStampSeconds(file, sheet), options);
+        var time = WallClock.Time;
+        var began = time.GetLocalNow();
+        var folder = SessionFolder.Create(options.Out ?? FolderName(sheet, wiring.Setup.SessionId, began));
+        wiring.WriteDocuments(folder, options, recording, began);
+        var summary = Play(wiring, folder, options, recording, began);
+        var text = SummaryText.Of(summary);
+        File.WriteAllText(folder.At("summary.txt"), text);
+        File.WriteAllText(folder.At("summary.json"), SummaryJson.Of(summary) + "\n");
+        Console.Out.Write(options.Json ? SummaryJson.Of(summary) + "\n" : text);
+        return summary.End == RunEnd.Fault ? ExitCode.Failed : ExitCode.Done;
+    }
+
+    private static RunSummary Play(WatchWiring wiring, SessionFolder folder, WatchOptions options, string recording, DateTimeOffset began)
+    {
+        using var tally = new RunTally(wiring.Surface);
+        using var recorder = new SessionRecorder(folder, wiring.Surface, wiring.Board);
+        using var thread = new DecisionThread(wiring.Loop, wiring.Gate);
+        using var guard = new RunGuard(wiring.Gate, folder, thread.Stop);
+        foreach (var note in wiring.Notes) wiring.Board.Post(note.Level, note.Where, note.What, note.Advice);
+        var collections = GC.CollectionCount(0);
+        var pause = GC.GetTotalPauseDuration();
+        thread.Start();
+        using (var progress = new ProgressLine(wiring.Loop, isShown: !options.Json))
+        {
+            while (!thread.Wait(Turn)) progress.Show();
+        }
+
+        wiring.Ledger.Process(GC.CollectionCount(0) - collections, GC.GetTotalPauseDuration() - pause);
+        wiring.Gate.Dispose();
+        foreach (var warning in wiring.FeedWarnings()) wiring.Board.Post(warning.Level, warning.Where, warning.What, warning.Advice);
+        wiring.Loop.DrainAll();
+        wiring.Surface.Complete();
+        LatencyFiles.Write(folder, wiring.Ledger, began, WallClock.Time.GetLocalNow());
+        if (thread.Failure is { } failure)
+        {
+            RunGuard.WriteCrash(folder, failure);
+            Console.Error.WriteLine($"livewave: failed: {failure.Message}; see crash.txt in {folder.FullPath}");
+        }
+
+        return wiring.Summary(tally, folder, options, recording, thread.Failure is not null);
+    }
+
+    private static double FirstStampSeconds(RecordingFile file, SessionSheet sheet)
+    {
+        using var feed = file.OpenFeed(sheet.Stream.Name);
+        var block = new SampleBlock(feed.Format, 1);
+        return feed.Pull(block, TimeSpan.Zero) == PullResult.Samples
+            ? block.RawStampSeconds(0)
+            : throw new RefusedException("the stream holds no sample", file.Path, "play another recording");
+    }
+
+    private static string RecordingOf(SessionSheet sheet) =>
+        sheet.Stream.File is { } file
+            ? sheet.PathOf(file)
+            : throw new RefusedException("no recording to play", $"{sheet.File}, [stream]", "give --from FILE, or 'file' in the sheet");
+
+    private static string FolderName(SessionSheet sheet, string sessionId, DateTimeOffset now)
+    {
+        var stamp = now.ToString("yyyyMMdd-HHmmss", CultureInfo.InvariantCulture);
+        var name = sessionId.EndsWith(stamp, StringComparison.Ordinal) ? sessionId : $"{sessionId}-{stamp}";
+        return Path.Combine(sheet.Record.Folder, name);
+    }
+}

@@ -1,0 +1,40 @@
+using LiveWave.Abstractions;
+using LiveWave.Pipeline;
+
+namespace LiveWave.App;
+
+/// <summary>Holds the stream that came against the one that the sheet expects.</summary>
+internal static class SheetFit
+{
+    private const double RateTolerance = 1e-6;
+
+    /// <exception cref="RefusedException">Rate or channel count differ.</exception>
+    public static void Check(SessionSheet sheet, StreamFormat format, string recording)
+    {
+        var expected = sheet.Stream;
+        if (double.IsFinite(expected.RateHz) && Math.Abs((format.NominalRateHz / expected.RateHz) - 1) > RateTolerance)
+        {
+            throw new RefusedException(
+                $"the stream has {format.NominalRateHz} Hz, the sheet expects {expected.RateHz} Hz",
+                recording,
+                $"play another recording, or mend rateHz in {sheet.File}");
+        }
+
+        if (expected.Channels is { } channels && channels != format.ChannelCount)
+        {
+            throw new RefusedException(
+                $"the stream has {format.ChannelCount} channels, the sheet expects {channels}",
+                recording,
+                $"play another recording, or mend channels in {sheet.File}");
+        }
+
+        foreach (var band in sheet.Bands)
+        {
+            if (band.HighHz < format.NominalRateHz / 2) continue;
+            throw new RefusedException(
+                $"band '{band.Name}' reaches {band.HighHz} Hz, and a rate of {format.NominalRateHz} Hz carries less than {format.NominalRateHz / 2} Hz",
+                sheet.File,
+                "lower highHz");
+        }
+    }
+}

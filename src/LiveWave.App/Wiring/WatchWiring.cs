@@ -1,0 +1,178 @@
+using System.Globalization;
+using LiveWave.Abstractions;
+using LiveWave.Pipeline;
+using LiveWave.Recordings;
+
+namespace LiveWave.App;
+
+/// <summary>Puts a rehearsal together by hand: reading this is reading the architecture.</summary>
+/// <remarks>sheet, recording → patches and calibrations → setup → warm-up on a clone → feed at a pace, gate, surface → loop.</remarks>
+internal sealed class WatchWiring : IDisposable
+{
+    private readonly SessionSheet _sheet;
+    private readonly RecordingFeed _recording;
+
+    private WatchWiring(SessionSheet sheet, RecordingFeed recording)
+    {
+        _sheet = sheet;
+        _recording = recording;
+    }
+
+    public required RunSetup Setup { get; init; }
+
+    public required CalibrationChoice Calibrations { get; init; }
+
+    public required WarmupReport Warmup { get; init; }
+
+    public required IClock Clock { get; init; }
+
+    public required PulseGate Gate { get; init; }
+
+    public required RunSurface Surface { get; init; }
+
+    public required StatusBoard Board { get; init; }
+
+    public required LatencyLedger Ledger { get; init; }
+
+    public required StreamLoop Loop { get; init; }
+
+    /// <summary>What waiting for an instant lacks on this machine; empty where it lacks nothing.</summary>
+    public required string Waiting { get; init; }
+
+    /// <summary>Which bits this machine computes.</summary>
+    public string NumericsPrint { get; } = Dsp.NumericsPrint.Compute();
+
+    /// <summary>What is worth knowing before the first block.</summary>
+    public IReadOnlyList<Status> Notes => Calibrations.Notes;
+
+    public static WatchWiring Make(SessionSheet sheet, RecordingFeed recording, double firstStampSeconds, WatchOptions options)
+    {
+        var stopwatch = new RealClock();
+        IClock clock = options.IsRealClock ? new RealClock(firstStampSeconds) : new VirtualClock(firstStampSeconds);
+        var catalog = BuiltInParts.Catalog();
+        var patches = sheet.Patches.Select(patch => PatchReader.Read(sheet, patch, recording.Format)).ToList();
+        var calibrations = CalibrationChoice.Make(sheet, patches, recording.Format);
+        var sessionId = options.SessionId ?? NewSessionId(sheet);
+        var setup = new RunSetupBuilder(sheet, recording.Format, catalog, clock).Build(patches, calibrations.Of, sessionId);
+        var warmup = Pipeline.Warmup.Run(setup, stopwatch);
+        var board = new StatusBoard(clock);
+        var surface = new RunSurface(board);
+        var gate = new PulseGate(Outputs(sheet, catalog, clock), clock, Limits(sheet));
+        gate.Open();
+        var ledger = new LatencyLedger(Budget(sheet));
+        var loop = new StreamLoop(setup, new RunParts
+        {
+            Feed = clock is VirtualClock steps ? new SteppedFeed(recording, steps, gate) : new PacedFeed(recording, clock),
+            Clock = clock,
+            Stopwatch = stopwatch,
+            Gate = gate,
+            Surface = surface,
+            Board = board,
+            Ledger = ledger,
+            BlockRows = options.BlockRows,
+            RowLimit = double.IsNaN(options.Seconds) ? long.MaxValue : (long)Math.Round(options.Seconds * recording.Format.NominalRateHz),
+        });
+        return new WatchWiring(sheet, recording)
+        {
+            Setup = setup,
+            Calibrations = calibrations,
+            Warmup = warmup,
+            Clock = clock,
+            Gate = gate,
+            Surface = surface,
+            Board = board,
+            Ledger = ledger,
+            Loop = loop,
+            Waiting = stopwatch.Lacks,
+        };
+    }
+
+    /// <summary>Writes what is known before the first block.</summary>
+    public void WriteDocuments(SessionFolder folder, WatchOptions options, string recording, DateTimeOffset began)
+    {
+        new SessionDocument
+        {
+            Name = _sheet.Session.Name,
+            SessionId = Setup.SessionId,
+            Seed = Setup.Seed,
+            Began = began,
+            Clock = ClockWord(options),
+            BlockRows = options.BlockRows,
+            Waiting = Waiting.Length == 0 ? "absolute sleep, then a short spin" : Waiting,
+            NumericsPrint = NumericsPrint,
+            Recording = Path.GetFileName(recording),
+        }.Write(folder);
+        File.Copy(_sheet.File, folder.At("sheet.toml"));
+        foreach (var path in Calibrations.Files) File.Copy(path, folder.At(Path.GetFileName(path)), overwrite: false);
+    }
+
+    /// <summary>What the recording had wrong with it, known only once it was read.</summary>
+    public IReadOnlyList<Status> FeedWarnings() => _recording.Warnings;
+
+    public RunSummary Summary(RunTally tally, SessionFolder folder, WatchOptions options, string recording, bool hasFailed) => new()
+    {
+        Verb = options.Verb,
+        Session = _sheet.Session.Name,
+        SessionId = Setup.SessionId,
+        Stream = Setup.Format.Name,
+        Channels = Setup.Format.ChannelCount,
+        RateHz = Setup.Format.NominalRateHz,
+        Seconds = Loop.Rows / Setup.Format.NominalRateHz,
+        End = hasFailed ? RunEnd.Fault : Loop.End,
+        Clock = ClockWord(options),
+        BlockRows = options.BlockRows,
+        LostRows = Loop.Repair.LostRows,
+        Gaps = Loop.Repair.Gaps,
+        BlankedRows = Loop.BlankedRows,
+        Tally = tally,
+        Ledger = Ledger,
+        Warmup = Warmup,
+        WithoutNoiseModel = Calibrations.WithoutNoiseModel,
+        Truth = Compare(tally, recording),
+        Folder = folder.FullPath,
+        NumericsPrint = NumericsPrint,
+    };
+
+    public void Dispose()
+    {
+        Gate.Dispose();
+        if (Clock is VirtualClock virtualClock) virtualClock.Close();
+    }
+
+    private static string ClockWord(WatchOptions options) => options.IsRealClock ? "real" : "fast";
+
+    private static string NewSessionId(SessionSheet sheet) =>
+        $"{sheet.Session.Name}-{WallClock.Time.GetLocalNow().ToString("yyyyMMdd-HHmmss", CultureInfo.InvariantCulture)}";
+
+    private static List<GateOutput> Outputs(SessionSheet sheet, PartCatalog catalog, IClock clock) =>
+    [
+        .. sheet.Outputs.Select(output => new GateOutput(
+            output.Name, catalog.Make<IOutput>(output.Plugin, new PluginOptions(output.Where, output.Options, clock)))
+        {
+            PatienceMs = output.PatienceMs,
+            IsDummy = output.Dummy,
+        }),
+    ];
+
+    private static GateLimits? Limits(SessionSheet sheet) => sheet.Limits is { } limits
+        ? new GateLimits
+        {
+            PulsesPerMinute = limits.PulsesPerMinute,
+            PulsesPerSession = limits.PulsesPerSession,
+            ShortestIntervalMs = limits.ShortestIntervalMs,
+            LongestRunMinutes = limits.LongestRunMinutes,
+            OldestDataMs = limits.OldestDataMs,
+        }
+        : null;
+
+    private static BudgetLimits Budget(SessionSheet sheet) =>
+        new(sheet.Budget.PhasedMs, sheet.Budget.ReadMs, sheet.Budget.DecidedMs, sheet.Budget.InAllMs);
+
+    private TruthComparison? Compare(RunTally tally, string recording)
+    {
+        var path = TruthTable.PathBeside(recording);
+        if (!File.Exists(path) || double.IsNaN(Loop.NewestStampSeconds)) return null;
+        var first = Loop.NewestStampSeconds - ((Loop.Rows + Loop.Repair.LostRows - 1) / Setup.Format.NominalRateHz);
+        return new TruthComparison(TruthTable.Read(path), tally.Waves, first, Loop.NewestStampSeconds);
+    }
+}

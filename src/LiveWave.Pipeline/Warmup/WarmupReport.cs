@@ -1,0 +1,9 @@
+namespace LiveWave.Pipeline;
+
+/// <summary>What a warm-up did.</summary>
+/// <param name="Pulses">Pulses decided.</param>
+/// <param name="Shams">Shams decided.</param>
+/// <param name="Holds">Holds decided.</param>
+/// <param name="Seconds">How long it took.</param>
+/// <param name="LateBlockP99Ms">99th percentile of computing a block in the second half, ms: the self-test.</param>
+public sealed record WarmupReport(int Pulses, int Shams, int Holds, double Seconds, double LateBlockP99Ms);

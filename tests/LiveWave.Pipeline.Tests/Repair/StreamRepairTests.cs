@@ -1,0 +1,93 @@
+using FsCheck.Xunit;
+using LiveWave.Abstractions;
+using LiveWave.Testing;
+
+namespace LiveWave.Pipeline.Tests;
+
+public sealed class StreamRepairTests
+{
+    private static readonly StreamFormat Format = new("array", 1000, WireFormat.Float32, [new("a", "microvolts")]);
+
+    [Fact]
+    public void A_steady_stream_is_numbered_as_it_came()
+    {
+        var rows = Repair([10.000, 10.001, 10.002], blockRows: 2);
+
+        Assert.Equal([0L, 1, 2], rows.Select(row => row.Index));
+        Assert.Equal([0L, 1, 2], rows.Select(row => row.Received));
+        Assert.All(rows, row => Assert.Equal(RowBreaks.None, row.Breaks));
+    }
+
+    [Fact]
+    public void A_gap_moves_indices_and_nothing_else()
+    {
+        var stamps = new[] { 10.000, 10.001, 10.006, 10.007 };
+
+        var rows = Repair(stamps, blockRows: 1000);
+
+        Assert.Equal([0L, 1, 6, 7], rows.Select(row => row.Index));
+        Assert.Equal([0L, 1, 2, 3], rows.Select(row => row.Received));
+        Assert.Equal(stamps, rows.Select(row => row.StampSeconds));
+        Assert.Equal([RowBreaks.None, RowBreaks.None, RowBreaks.Gap, RowBreaks.None], rows.Select(row => row.Breaks));
+    }
+
+    [Fact]
+    public void What_was_lost_is_counted()
+    {
+        var repair = new StreamRepair(Format);
+
+        _ = Repair([10.000, 10.005, 10.006, 10.016], blockRows: 3, repair);
+
+        Assert.Equal(2, repair.Gaps);
+        Assert.Equal(4 + 9, repair.LostRows);
+    }
+
+    [Fact]
+    public void A_stream_that_begins_anew_is_a_restart_and_no_gap()
+    {
+        var feed = new FakeFeed(Format, Rows(4), [10.000, 10.001, 3.000, 3.001]).RestartBefore(2);
+
+        var rows = Repair(feed, blockRows: 10);
+
+        Assert.Equal([RowBreaks.None, RowBreaks.None, RowBreaks.Restart, RowBreaks.None], rows.Select(row => row.Breaks));
+        Assert.Equal([0L, 1, 2, 3], rows.Select(row => row.Index));
+    }
+
+    [Fact]
+    public void Stamps_that_go_back_far_are_a_restart_even_if_the_feed_did_not_notice()
+    {
+        var rows = Repair([10.000, 10.001, 3.000], blockRows: 10);
+
+        Assert.Equal(RowBreaks.Restart, rows[2].Breaks);
+    }
+
+    [Property(MaxTest = 200)]
+    public bool Rows_are_placed_alike_whatever_the_block_size(byte[] steps, byte blockRows)
+    {
+        var stamps = new double[steps.Length + 1];
+        stamps[0] = 50;
+        for (var i = 0; i < steps.Length; i++) stamps[i + 1] = stamps[i] + (0.001 * (1 + (steps[i] % 5 == 0 ? steps[i] : 0)));
+
+        return Repair(stamps, 1 + blockRows).SequenceEqual(Repair(stamps, 1));
+    }
+
+    private static double[][] Rows(int count) => [.. Enumerable.Range(0, count).Select(i => new double[] { i })];
+
+    private static List<RowInstant> Repair(double[] stamps, int blockRows, StreamRepair? repair = null) =>
+        Repair(new FakeFeed(Format, Rows(stamps.Length), stamps), blockRows, repair);
+
+    private static List<RowInstant> Repair(FakeFeed feed, int blockRows, StreamRepair? repair = null)
+    {
+        repair ??= new StreamRepair(Format);
+        var block = new SampleBlock(Format, blockRows);
+        var rows = new RepairedRows(blockRows);
+        var placed = new List<RowInstant>();
+        while (feed.Pull(block, TimeSpan.Zero) == PullResult.Samples)
+        {
+            repair.Apply(block, rows);
+            for (var i = 0; i < rows.Count; i++) placed.Add(rows[i]);
+        }
+
+        return placed;
+    }
+}
