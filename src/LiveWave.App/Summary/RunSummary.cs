@@ -40,6 +40,9 @@ internal sealed record RunSummary
     /// <summary>Patch and band pairs whose calibration holds no noise model.</summary>
     public required IReadOnlyList<string> WithoutNoiseModel { get; init; }
 
+    /// <summary>How often events come by chance, as it was calibrated.</summary>
+    public required IReadOnlyList<ChanceRate> Chance { get; init; }
+
     /// <summary>Null where no truth lies beside the recording.</summary>
     public TruthComparison? Truth { get; init; }
 

@@ -1,3 +1,4 @@
+using System.Text.Encodings.Web;
 using System.Text.Json;
 using System.Text.Json.Nodes;
 using LiveWave.Abstractions;
@@ -8,7 +9,7 @@ namespace LiveWave.App;
 /// <summary>Writes a summary for programs: the same figures as <see cref="SummaryText"/>, null for what is not known.</summary>
 internal static class SummaryJson
 {
-    private static readonly JsonSerializerOptions Indented = new() { WriteIndented = true };
+    private static readonly JsonSerializerOptions Indented = new() { WriteIndented = true, Encoder = JavaScriptEncoder.UnsafeRelaxedJsonEscaping };
 
     public static string Of(RunSummary run)
     {
@@ -43,6 +44,7 @@ internal static class SummaryJson
                 ["seconds"] = run.Warmup.Seconds,
                 ["selfTestP99Ms"] = Known(run.Warmup.LateBlockP99Ms),
             },
+            ["chance"] = new JsonArray([.. run.Chance.Select(Chance)]),
             ["withoutNoiseModel"] = new JsonArray([.. run.WithoutNoiseModel.Select(where => (JsonNode)where)]),
             ["truth"] = run.Truth is { } truth ? Truth(truth) : null,
             ["folder"] = run.Folder,
@@ -50,6 +52,26 @@ internal static class SummaryJson
         };
         return root.ToJsonString(Indented);
     }
+
+    private static JsonNode Chance(ChanceRate chance) => new JsonObject
+    {
+        ["where"] = chance.Where,
+        ["kind"] = WaveKinds.Word(chance.Threshold.Kind),
+        ["nominalPerMinute"] = Known(chance.Threshold.NominalPerMinute),
+        ["surrogate"] = Rate(chance.Threshold.Surrogate),
+        ["baseline"] = Rate(chance.Threshold.Baseline),
+    };
+
+    private static JsonObject? Rate(FalseEventRate? rate) => rate is null
+        ? null
+        : new JsonObject
+        {
+            ["perMinute"] = Known(rate.PerMinute),
+            ["lowPerMinute"] = Known(rate.LowPerMinute),
+            ["highPerMinute"] = Known(rate.HighPerMinute),
+            ["n"] = rate.Count,
+            ["minutes"] = Known(rate.Minutes),
+        };
 
     private static JsonNode Stage(StageHistogram stage) => new JsonObject
     {

@@ -17,13 +17,8 @@ internal static class SummaryText
         yield return Row("", $"{run.LostRows} rows lost in {run.Gaps} gaps; {run.BlankedRows} rows blanked after own pulses and shams");
         yield return Row("frames", $"{tally.Frames} read, {Share(tally.ValidFrames, tally.Frames)} with enough channels observed");
         yield return Row("waves", Counted(tally.Kinds().Select(pair => (WaveKinds.Word(pair.Kind), pair.Count)), tally.Waves.Count, "events"));
-        yield return Row("decisions", Decisions(tally));
-        var holds = tally.Holds();
-        if (holds.Count > 0)
-        {
-            yield return Row("", "held for: " + string.Join(", ", holds.Select(hold => $"{DecisionWords.Failed(hold.Failed)} {hold.Count}")));
-        }
-
+        foreach (var chance in run.Chance) yield return Row("", Chance(chance));
+        foreach (var line in Decisions(tally)) yield return line;
         yield return Row("outcomes", Outcomes(tally));
         yield return "";
         foreach (var line in Latency(run)) yield return line;
@@ -89,10 +84,35 @@ internal static class SummaryText
         yield return Row("caution", "for research, not a medical device; stimulation needs licensed practice and your local rules");
     }
 
-    private static string Decisions(RunTally tally) =>
-        tally.Decisions.Count == 0
-            ? "none"
-            : $"{tally.CountOf(DecisionKind.Pulse)} pulses, {tally.CountOf(DecisionKind.Sham)} shams, {tally.CountOf(DecisionKind.Hold)} holds (n = {tally.Decisions.Count})";
+    private static IEnumerable<string> Decisions(RunTally tally)
+    {
+        if (tally.Decisions.Count == 0) yield return Row("decisions", "none");
+        var head = "decisions";
+        foreach (var rule in tally.Decisions.GroupBy(decision => decision.Rule, StringComparer.Ordinal))
+        {
+            int Of(DecisionKind kind) => rule.Count(decision => decision.Kind == kind);
+            yield return Row(
+                head,
+                $"{rule.Key}: {Of(DecisionKind.Pulse)} pulses, {Of(DecisionKind.Sham)} shams, {Of(DecisionKind.Hold)} holds (n = {rule.Count()})");
+            head = "";
+        }
+
+        var holds = tally.Holds();
+        if (holds.Count == 0) yield break;
+        yield return Row("", "held because of: " + string.Join(", ", holds.Select(hold => $"{DecisionWords.Failed(hold.Failed)} {hold.Count}")));
+    }
+
+    private static string Chance(ChanceRate chance)
+    {
+        var threshold = chance.Threshold;
+        if (threshold.Surrogate is not { } surrogate) return $"{chance.Where}: how often {WaveKinds.Word(threshold.Kind)} events come by chance is not known";
+        return $"by chance {Rate(surrogate)} in a surrogate"
+            + (threshold.Baseline is { } baseline ? $", {Rate(baseline)} in the baseline" : "")
+            + $" ({chance.Where}, as calibrated)";
+    }
+
+    private static string Rate(FalseEventRate rate) =>
+        $"{Number(rate.PerMinute, 2)} a minute [{Number(rate.LowPerMinute, 2)}, {Number(rate.HighPerMinute, 2)}; {rate.Count} in {Number(rate.Minutes, 0)} min]";
 
     private static string Outcomes(RunTally tally)
     {

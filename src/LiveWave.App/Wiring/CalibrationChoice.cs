@@ -9,6 +9,7 @@ internal sealed class CalibrationChoice
     private readonly Dictionary<(int Patch, string Band), Calibration> _chosen = [];
     private readonly List<Status> _notes = [];
     private readonly List<string> _withoutNoise = [];
+    private readonly List<ChanceRate> _chance = [];
     private readonly Dictionary<string, CalibrationFile> _files = new(StringComparer.Ordinal);
 
     /// <summary>What is worth knowing before the first block.</summary>
@@ -16,6 +17,9 @@ internal sealed class CalibrationChoice
 
     /// <summary>Patch and band pairs without a noise model.</summary>
     public IReadOnlyList<string> WithoutNoiseModel => _withoutNoise;
+
+    /// <summary>How often events come by chance, as it was calibrated.</summary>
+    public IReadOnlyList<ChanceRate> Chance => _chance;
 
     /// <summary>The files that were read.</summary>
     public IReadOnlyCollection<string> Files => _files.Keys;
@@ -74,6 +78,7 @@ internal sealed class CalibrationChoice
         var where = $"patch '{patch.Name}', band '{band.Name}'";
         var calibration = Read(sheet, sheet.Patches[number], patch, band, format, where);
         if (calibration.Noise is null) _withoutNoise.Add(where);
+        foreach (var threshold in calibration.Thresholds) _chance.Add(new ChanceRate(where, threshold));
         _chosen.Add((number, band.Name), WithOwnThreshold(calibration, band.Waves[0].Event.Enter));
     }
 

@@ -128,6 +128,7 @@ internal sealed class WatchWiring : IDisposable
         Ledger = Ledger,
         Warmup = Warmup,
         WithoutNoiseModel = Calibrations.WithoutNoiseModel,
+        Chance = Calibrations.Chance,
         Truth = Compare(tally, recording),
         Folder = folder.FullPath,
         NumericsPrint = NumericsPrint,

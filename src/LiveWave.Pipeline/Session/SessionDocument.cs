@@ -1,6 +1,7 @@
 using System.Reflection;
 using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
+using System.Text.Encodings.Web;
 using System.Text.Json;
 using System.Text.Json.Nodes;
 
@@ -9,7 +10,7 @@ namespace LiveWave.Pipeline;
 /// <summary><c>session.json</c>: what ran, on what kind of machine, with which seed. Nothing that names a person or a machine.</summary>
 public sealed record SessionDocument
 {
-    private static readonly JsonSerializerOptions Indented = new() { WriteIndented = true };
+    private static readonly JsonSerializerOptions Indented = new() { WriteIndented = true, Encoder = JavaScriptEncoder.UnsafeRelaxedJsonEscaping };
 
     /// <summary>The sheet's name for the session.</summary>
     public required string Name { get; init; }

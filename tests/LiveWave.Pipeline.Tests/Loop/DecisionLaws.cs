@@ -35,8 +35,8 @@ public sealed class DecisionLaws
         var half = Rows.Length / 2;
         var changed = Rows.Select((row, i) => i < half ? row : [.. row.Select(value => -3 * value)]).ToArray();
 
-        var before = Rig.Play(Setup, Feed(), blockRows: 32).Decisions.Where(decision => DecidedBy(decision) < half).ToList();
-        var after = Rig.Play(Setup, new FakeFeed(Setup.Format, changed), blockRows: 32).Decisions.Take(before.Count);
+        var before = Acts(Rig.Play(Setup, Feed(), blockRows: 32)).Where(decision => decision.At.Received < half).ToList();
+        var after = Acts(Rig.Play(Setup, new FakeFeed(Setup.Format, changed), blockRows: 32)).Where(decision => decision.At.Received < half);
 
         Assert.NotEmpty(before);
         Assert.Equal(before, after);
@@ -45,8 +45,8 @@ public sealed class DecisionLaws
     [Fact]
     public void Another_session_draws_other_lots_and_decides_at_the_same_rows()
     {
-        var one = Rig.Play(Setup, Feed(), blockRows: 32).Decisions.Where(decision => decision.Kind != DecisionKind.Hold).ToList();
-        var two = Rig.Play(Setup with { SessionId = "another" }, Feed(), blockRows: 32).Decisions.Where(decision => decision.Kind != DecisionKind.Hold).ToList();
+        var one = Acts(Rig.Play(Setup, Feed(), blockRows: 32));
+        var two = Acts(Rig.Play(Setup with { SessionId = "another" }, Feed(), blockRows: 32));
 
         Assert.Equal(one.Select(decision => decision.At), two.Select(decision => decision.At));
         Assert.NotEqual(one.Select(decision => decision.Lot), two.Select(decision => decision.Lot));
@@ -101,7 +101,7 @@ public sealed class DecisionLaws
 
     private static FakeFeed Feed() => new(Setup.Format, Rows);
 
-    private static long DecidedBy(Decision decision) => decision.Kind == DecisionKind.Hold ? long.MaxValue : decision.At.Received;
+    private static List<Decision> Acts(Rig rig) => [.. rig.Decisions.Where(decision => decision.Kind != DecisionKind.Hold)];
 
     private static void Act(byte[] script, int turn, PulseGate gate)
     {

@@ -1,0 +1,40 @@
+using System.CommandLine;
+using LiveWave.Abstractions;
+
+namespace LiveWave.App;
+
+/// <summary>From arguments to an exit code: what is wrong is said in lines for people, never as a stack trace.</summary>
+internal static class EntryPoint
+{
+    private static readonly InvocationConfiguration OwnErrors = new()
+    {
+        EnableDefaultExceptionHandler = false,   // it prints a trace and ends with 1
+        ProcessTerminationTimeout = null,        // signals are the run's own business
+    };
+
+    public static int Run(string[] args)
+    {
+        try
+        {
+            var parsed = CommandTree.Build(WatchVerb.Run).Parse(args);
+            return parsed.Errors.Count == 0 ? parsed.Invoke(OwnErrors) : Refuse(parsed);
+        }
+        catch (RefusedException refused)
+        {
+            foreach (var line in refused.Message.Split('\n')) Console.Error.WriteLine($"livewave: {line}");
+            return ExitCode.Refused;
+        }
+        catch (Exception error)
+        {
+            Console.Error.WriteLine($"livewave: failed: {error.Message}");
+            return ExitCode.Failed;
+        }
+    }
+
+    private static int Refuse(ParseResult parsed)
+    {
+        foreach (var error in parsed.Errors) Console.Error.WriteLine($"livewave: {error.Message}");
+        Console.Error.WriteLine("livewave: see --help");
+        return ExitCode.Refused;
+    }
+}
