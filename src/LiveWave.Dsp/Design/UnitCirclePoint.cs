@@ -24,7 +24,7 @@ internal readonly struct UnitCirclePoint
     {
         var (u, v) = Centred(c0, c1, c2);
         var size = (u * u) + (v * v);
-        if (size == 0) return 1;
+        if (size == 0) return c2 == 0 ? 0.5 : 1;      // a single zero, or a symmetric pair
 
         var slopeOfU = -(c0 + c2) * _sine;
         var slopeOfV = (c0 - c2) * _cosine;

@@ -66,6 +66,18 @@ public class ButterworthDesignTests
         }
     }
 
+    [Theory]
+    [InlineData(1)]
+    [InlineData(2)]
+    [InlineData(3)]
+    public void Where_nothing_gets_through_the_delay_is_what_holds_beside_it(int order)
+    {
+        var design = ButterworthDesign.HighPass(order, 10, RateHz);
+
+        Assert.Equal(0, GainOf(design, 0));
+        Assert.Equal(design.GroupDelaySeconds(1e-4), design.GroupDelaySeconds(0), 1e-9);
+    }
+
     [Fact]
     public void The_same_coefficients_at_twice_the_rate_hold_for_twice_the_frequency()
     {
