@@ -141,7 +141,7 @@ public abstract class WaveEstimatorLaws
     {
         for (var i = 0; i < count; i++)
         {
-            var channel = (i * 5) + 2;
+            var channel = ((i * 5) + 2) % ChannelCount;
             phasors.Validity[channel] = i % 2 == 0 ? Validity.Bridged : Validity.Invalid;
             phasors.Re[channel] = i % 2 == 0 ? 50 : double.NaN;
         }

@@ -18,7 +18,7 @@ import sys
 FRAMES = (
     "plane-g8_0.4c-0", "plane-g8_0.4c-1", "plane-g8_0.4c-2", "plane-g10_0.4c-2", "plane-g4x16_1-1", "plane-irr40-0",
     "plane-irr40-1", "plane-irr40-2", "plane-lin16_0.1-0", "plane-lin16_0.1-1", "plane-lin16_0.1-2", "rotating-ccw-6dB",
-    "sync-40dB", "sync-6dB", "standing-nodes-6dB", "two-planes-dominant-6dB", "noise-only", "plane-with-bad-channels",
+    "sync-40dB", "sync-6dB", "standing-nodes-40dB", "two-planes-dominant-6dB", "noise-only", "plane-with-bad-channels",
 )
 WHITENED = ("lambda_max", "E_plane", "k_grid", "k_gls", "cov_k_unit_noise", "noise_scale", "se_direction_deg")
 

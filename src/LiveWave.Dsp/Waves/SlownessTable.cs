@@ -6,12 +6,15 @@ namespace LiveWave.Dsp;
 /// d = √(2·dL) is the length of the wave vector in standard errors, d² non-central chi-square with λ = δ², δ the true length, cut
 /// below twice the gate. δ at low, middle, high solves P(χ²(δ²) &gt; d²)/P(χ²(δ²) &gt; 2·gate) = 0.05, 0.5, 0.95; 0 where none does:
 /// the speed may be infinite. Intervals conditional on having passed a threshold: Zhong and Prentice (2008). Tabled is
-/// (δ² − d²)/d over ln(d − d₀), which is smooth from the place where δ leaves 0 on.
+/// (δ² − d²)/d over ln(1 + (d − d₁)/c), where δ leaves 0 at d₁ and c is how quickly it then changes: a quarter of the nearer of
+/// the gate and 1/d₁, since at first δ² grows as exp(d²/2).
 /// </remarks>
 internal sealed class SlownessTable
 {
-    private const double Step = 0.02;        // of ln(d − d₀): a cubic between the nodes is right to 1e-8
+    private const double Step = 0.05;        // of the logarithm: with six nodes around factors are right to 1e-6
     private const double Longest = 128;      // beyond what 256 channels without any noise reach
+
+    private static readonly double[] Around = [1, -5, 10, -10, 5, -1];
 
     private readonly int _freedom;
     private readonly double _gated;          // d₀
@@ -36,24 +39,24 @@ internal sealed class SlownessTable
     public (double Low, double Middle, double High) Factors(double gainOverUniform)
     {
         var d = Math.Sqrt(2 * gainOverUniform);
-        return (_low.Factor(d, _gated), _middle.Factor(d, _gated), _high.Factor(d, _gated));
+        return (_low.Factor(d), _middle.Factor(d), _high.Factor(d));
     }
 
     private Curve Solve(double probability)
     {
-        var first = Portable.Log(Leaves(probability) - _gated);
-        var nodes = new double[(int)((Portable.Log(Longest - _gated) - first) / Step) + 2];
+        var leaves = Leaves(probability);
+        var scale = 0.25 * Math.Min(leaves - _gated, 1 / leaves);
+        var nodes = new double[(int)(Portable.Log(1 + Longest / scale) / Step) + 2];
+        nodes[0] = -leaves;
         var noncentrality = 0.0;
         for (var i = 1; i < nodes.Length; i++)
         {
-            var d = _gated + Portable.Exp(first + i * Step);
+            var d = leaves + scale * (Portable.Exp(i * Step) - 1);
             noncentrality = Root(new ChiSquareTails(_freedom, d * d), probability, noncentrality, (d + 8) * (d + 8));
             nodes[i] = (noncentrality - d * d) / d;
         }
 
-        var leaves = _gated + Portable.Exp(first);
-        nodes[0] = -leaves;
-        return new Curve(first, leaves, nodes);
+        return new Curve(leaves, scale, nodes);
     }
 
     // The d from which on the solution is above 0.
@@ -101,17 +104,30 @@ internal sealed class SlownessTable
         return 0.5 * (low + high);
     }
 
-    private sealed class Curve(double first, double leaves, double[] nodes)
+    private sealed class Curve(double leaves, double scale, double[] nodes)
     {
-        public double Factor(double d, double gated)
+        public double Factor(double d)
         {
             if (!(d > leaves)) return 0;
-            var at = Math.Min((Portable.Log(d - gated) - first) / Step, nodes.Length - 1);
-            var left = Math.Clamp((int)at - 1, 0, nodes.Length - 4);
-            var u = at - left;
-            var value = (nodes[left + 3] * u * (u - 1) * (u - 2) - nodes[left] * (u - 1) * (u - 2) * (u - 3)) / 6
-                + (nodes[left + 1] * u * (u - 2) * (u - 3) - nodes[left + 2] * u * (u - 1) * (u - 3)) / 2;
-            return Math.Sqrt(Math.Max(d * d + value * d, 0)) / d;
+            var at = Math.Min(Portable.Log(1 + (d - leaves) / scale) / Step, nodes.Length - 1);
+            return Math.Sqrt(Math.Max(d * d + Between(at) * d, 0)) / d;
+        }
+
+        // Lagrange's polynomial through six nodes, in barycentric form.
+        private double Between(double at)
+        {
+            var left = Math.Clamp((int)at - 2, 0, nodes.Length - Around.Length);
+            var (sum, weights) = (0.0, 0.0);
+            for (var j = 0; j < Around.Length; j++)
+            {
+                var distance = at - (left + j);
+                if (distance == 0) return nodes[left + j];
+                var weight = Around[j] / distance;
+                sum += weight * nodes[left + j];
+                weights += weight;
+            }
+
+            return sum / weights;
         }
     }
 }
