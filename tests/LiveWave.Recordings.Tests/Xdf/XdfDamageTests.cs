@@ -149,15 +149,14 @@ public sealed class XdfDamageTests : IDisposable
     [Fact]
     public void The_signature_inside_samples_is_no_place_to_go_on()
     {
-        var signature = new double[16];
-        for (var i = 0; i < 16; i++) signature[i] = (sbyte)XdfBuilder.Signature[i];
-        var builder = new XdfBuilder().Stream(1, "array", 16, "10", "int8").Samples(1, (1.0, new double[16])).Raw([0])
-            .Samples(1, (2.0, signature)).Boundary().Samples(1, (3.0, signature));
+        double[] values = [.. XdfBuilder.Signature.ToArray().Select(one => (double)(sbyte)one), 1, 12, 99, 0];      // and what could be a chunk
+        var builder = new XdfBuilder().Stream(1, "array", 20, "10", "int8").Samples(1, (1.0, new double[20])).Raw([0])
+            .Samples(1, (2.0, values)).Boundary().Samples(1, (3.0, values));
 
         var played = Played.File(_folder.Write("signature.dat", builder.Bytes));
 
         Assert.Equal([1.0, 3.0], played.Stamps);
-        Assert.Equal(signature, played.Rows[1]);
+        Assert.Equal(values, played.Rows[1]);
         Assert.Single(played.Warnings);
     }
 
