@@ -29,6 +29,7 @@ internal sealed class SheetSketch
         "band.lowHz" => 14.0,
         "band.highHz" => 22.0,
         "limits.pulsesPerMinute" => 3L,
+        "limits.oldestDataMs" => 50.0,
         "conditioning.mainsHz" => 60.0,
         "patch.axes" => new Dictionary<string, object?> { ["anterior"] = 10L, ["left"] = 100.5 },
         "output.options" => new Dictionary<string, object?> { ["widthMs"] = 2L, ["line"] = "a", ["inverted"] = true },
