@@ -66,6 +66,19 @@ public sealed class SheetCrossCheckTests
         else Assert.StartsWith("s.toml:19: limits.pulsesPerMinute: ", Assert.IsType<RefusedException>(refusal).Message, StringComparison.Ordinal);
     }
 
+    [Theory]
+    [InlineData("49.9", true)]
+    [InlineData("50", false)]
+    public void A_lead_is_shorter_than_the_oldest_data_allowed(string leadMs, bool isFine)
+    {
+        var text = SheetTexts.ShortBut("[[rule]]", Limits) + $"leadMs = {leadMs}\n";
+
+        var refusal = Record.Exception(() => SheetReader.Parse(text, "s.toml"));
+
+        if (isFine) Assert.Null(refusal);
+        else Assert.StartsWith("s.toml:29: rule.leadMs: it is not below limits.oldestDataMs (50)", Assert.IsType<RefusedException>(refusal).Message, StringComparison.Ordinal);
+    }
+
     [Fact]
     public void A_name_that_was_refused_itself_does_not_make_a_second_fault()
     {

@@ -15,7 +15,7 @@ internal sealed class SheetSketch
     public static SheetSketch Least() =>
         Of(key => key.IsBuilt && (key.IsRequired || key.Path == "stream.file") && !key.Path.StartsWith("limits", StringComparison.Ordinal));
 
-    /// <summary>What a key gets in <see cref="Full"/>.</summary>
+    /// <summary>What a key gets in <see cref="Full"/>: each something else, so that none is read in another's place.</summary>
     public static object Sample(SheetKey key) => key.Path switch
     {
         "patch.name" or "rule.patch" => "quill",
@@ -29,6 +29,7 @@ internal sealed class SheetSketch
         "band.lowHz" => 14.0,
         "band.highHz" => 22.0,
         "limits.pulsesPerMinute" => 3L,
+        "limits.oldestDataMs" => 50.0,
         "conditioning.mainsHz" => 60.0,
         "patch.axes" => new Dictionary<string, object?> { ["anterior"] = 10L, ["left"] = 100.5 },
         "output.options" => new Dictionary<string, object?> { ["widthMs"] = 2L, ["line"] = "a", ["inverted"] = true },
@@ -62,13 +63,13 @@ internal sealed class SheetSketch
 
     private static object SampleOf(SheetKey key) => key.Type switch
     {
-        SheetKeyType.Name => "first",
+        SheetKeyType.Name => $"first {key.TablePath}",
         SheetKeyType.Text when key.Words.Count > 0 => key.Words[^1],
-        SheetKeyType.Text => "something",
+        SheetKeyType.Text => $"some {key.Name}",
         SheetKeyType.Texts => new[] { "r1c1", "r2c2" },
         SheetKeyType.Whole => (long)key.Low + 6,
         SheetKeyType.Flag => true,
-        _ => (double.IsFinite(key.Low) ? key.Low : 0) + (key.High <= 1 ? 0.25 : 17.5),
+        _ => (double.IsFinite(key.Low) ? key.Low : 0) + (key.High <= 1 ? 0.25 : 17.5 + 0.01 * Array.IndexOf([.. SheetKeys.All], key)),
     };
 
     private static SheetSketch Of(Func<SheetKey, bool> isWanted)

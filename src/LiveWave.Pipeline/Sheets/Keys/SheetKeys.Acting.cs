@@ -46,7 +46,9 @@ public static partial class SheetKeys
         Whole("limits.pulsesPerSession", "Most pulses in the session", high: 1_000_000),
         Number("limits.shortestIntervalMs", "ms", "Shortest time between two pulses", low: 0, high: 3_600_000, above: true),
         Number("limits.longestRunMinutes", "minutes", "Longest run", low: 0, high: 1440, above: true),
-        Number("limits.oldestDataMs", "ms", "Oldest data on which a pulse may rest", low: 0, high: 10_000, above: true),
+        Number(
+            "limits.oldestDataMs", "ms", "Oldest that a deciding row may be when its pulse leaves; above every leadMs",
+            low: 0, high: 20_000, above: true),
     ];
 
     private static SheetKey[] OutputKeys() =>

@@ -15,6 +15,6 @@ public sealed record LimitsTable
     /// <summary>Longest run, minutes, above 0.</summary>
     public required double LongestRunMinutes { get; init; }
 
-    /// <summary>Oldest data on which a pulse may rest, ms, above 0.</summary>
+    /// <summary>Oldest that a deciding row may be when its pulse leaves, ms from its stamp, above every rule's lead.</summary>
     public required double OldestDataMs { get; init; }
 }

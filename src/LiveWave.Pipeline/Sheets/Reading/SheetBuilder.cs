@@ -107,7 +107,7 @@ internal sealed class SheetBuilder(string file)
         Patch = Said(table, "patch"),
         Band = Said(table, "band"),
         Wave = table.Text("wave") ?? bands.First(band => band.Name == table.Text("band")).Waves[0].Estimator,
-        Kind = Kind(Said(table, "kind")),
+        Kind = WaveKinds.TryParse(Said(table, "kind"), out var kind) ? kind : throw Hole(table, "kind"),
         DirectionDegrees = table.Number("directionDegrees"),
         ToleranceDegrees = table.Number("toleranceDegrees"),
         StandardErrorDegrees = table.Number("standardErrorDegrees"),
@@ -146,12 +146,6 @@ internal sealed class SheetBuilder(string file)
         InAllMs = table.Number("inAllMs"),
     };
 
-    private static WaveKind Kind(string word) => word switch
-    {
-        "planar" => WaveKind.Planar,
-        _ => throw new InvalidOperationException($"the key table lets '{word}' through and no kind belongs to it"),
-    };
-
     private static string Said(CheckedTable table, string name) => table.Text(name) ?? throw Hole(table, name);
 
     private static int Count(CheckedTable table, string name) => (int)(table.Whole(name) ?? throw Hole(table, name));
@@ -159,5 +153,5 @@ internal sealed class SheetBuilder(string file)
     private static CheckedTable Needed(CheckedTable table, string name) => table.Table(name) ?? throw Hole(table, name);
 
     private static InvalidOperationException Hole(CheckedTable table, string name) =>
-        new($"'{SheetKeys.Join(table.Path, name)}' was neither given nor refused");
+        new($"'{SheetKeys.Join(table.Path, name)}' was neither read nor refused");
 }

@@ -96,6 +96,14 @@ internal sealed class SheetCrossChecks(List<SheetFault> faults)
             if (!rule.Wrote(one) || rule.Wrote(other)) continue;
             Fault(rule, one, $"{other} is missing", $"give both, or neither for any direction; {other} takes {Takes(rule, other)}");
         }
+
+        // The pulse leaves a lead after the deciding row, which is that old by then.
+        if (sheet.Table("limits")?.Number("oldestDataMs") is { } oldestMs && rule.Number("leadMs") >= oldestMs)
+        {
+            Fault(
+                rule, "leadMs", $"it is not below limits.oldestDataMs ({SheetValues.Written(oldestMs)}), so that no pulse could leave",
+                "correct one of the two");
+        }
     }
 
     private void CheckLimits(CheckedTable limits)
