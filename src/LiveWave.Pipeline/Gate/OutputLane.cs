@@ -92,9 +92,8 @@ internal sealed class OutputLane
         var wake = Math.Min(_slot.DueSeconds, _room.Clock.NowSeconds + LongestSleepSeconds);
         _room.Clock.WaitUntil(wake);
         var now = _room.Clock.NowSeconds;
-        if (now < wake) _ = _slot.TryEnd(SlotState.Pending, Name, OutcomeKind.Cancelled);   // the clock was closed: no instant comes
+        if (now < wake) Cancel();   // the clock was closed: no instant comes
         else if (now >= _slot.DueSeconds) LastInstant();
-        _room.Settling.Tell();
         return true;
     }
 
@@ -111,11 +110,15 @@ internal sealed class OutputLane
         finally
         {
             Volatile.Write(ref _atLastInstant, 0);
+            _room.Settling.Tell();
         }
     }
 
     /// <summary>Any thread: ends a pulse that waits.</summary>
-    internal void Cancel() => _ = _slot.TryEnd(SlotState.Pending, Name, OutcomeKind.Cancelled);
+    internal void Cancel()
+    {
+        if (_slot.TryEnd(SlotState.Pending, Name, OutcomeKind.Cancelled)) _room.Settling.Tell();
+    }
 
     /// <summary>Any thread but the decision's, after the standing was swapped: waits until no send is under way, or it has
     /// been closed from outside.</summary>

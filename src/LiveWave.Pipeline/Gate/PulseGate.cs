@@ -265,7 +265,6 @@ public sealed class PulseGate : IDisposable
     private void CancelPending()
     {
         foreach (var lane in _lanes) lane.Cancel();
-        _room.Settling.Tell();
     }
 
     private void AwaitQuiet()
