@@ -1,5 +1,4 @@
 using System.Globalization;
-using LiveWave.App;
 using LiveWave.Benchmarks;
 
 // usage: dotnet run -c Release --project tests/LiveWave.Benchmarks -- [SECONDS]     (default 60 for each block size)

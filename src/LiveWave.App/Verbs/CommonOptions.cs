@@ -1,4 +1,5 @@
 using System.CommandLine;
+using System.Globalization;
 
 namespace LiveWave.App;
 
@@ -46,11 +47,18 @@ internal sealed class CommonOptions
         _view.AcceptOnlyFromAmong("none");
         _seconds.Validators.Add(result =>
         {
-            if (result.GetValueOrDefault<double?>() is { } seconds && !(seconds > 0 && double.IsFinite(seconds))) result.AddError("--seconds must be above 0");
+            // What is no number at all is the parser's to say.
+            if (double.TryParse(result.Tokens[0].Value, CultureInfo.InvariantCulture, out var seconds) && !(seconds > 0 && double.IsFinite(seconds)))
+            {
+                result.AddError("--seconds must be above 0");
+            }
         });
         _blockRows.Validators.Add(result =>
         {
-            if (result.GetValueOrDefault<int>() is < 1 or > MostBlockRows) result.AddError($"--block-rows must be from 1 to {MostBlockRows}");
+            if (result.Tokens.Count > 0 && int.TryParse(result.Tokens[0].Value, CultureInfo.InvariantCulture, out var rows) && rows is < 1 or > MostBlockRows)
+            {
+                result.AddError($"--block-rows must be from 1 to {MostBlockRows}");
+            }
         });
     }
 

@@ -6,18 +6,12 @@ namespace LiveWave.App;
 /// <summary>From arguments to an exit code: what is wrong is said in lines for people, never as a stack trace.</summary>
 internal static class EntryPoint
 {
-    private static readonly InvocationConfiguration OwnErrors = new()
-    {
-        EnableDefaultExceptionHandler = false,   // it prints a trace and ends with 1
-        ProcessTerminationTimeout = null,        // signals are the run's own business
-    };
-
     public static int Run(string[] args)
     {
         try
         {
             var parsed = CommandTree.Build(WatchVerb.Run).Parse(args);
-            return parsed.Errors.Count == 0 ? parsed.Invoke(OwnErrors) : Refuse(parsed);
+            return parsed.Errors.Count == 0 ? parsed.Invoke(OwnErrors()) : Refuse(parsed);
         }
         catch (RefusedException refused)
         {
@@ -30,6 +24,12 @@ internal static class EntryPoint
             return ExitCode.Failed;
         }
     }
+
+    private static InvocationConfiguration OwnErrors() => new()
+    {
+        EnableDefaultExceptionHandler = false,   // it prints a trace and ends with 1
+        ProcessTerminationTimeout = null,        // signals are the run's own business
+    };
 
     private static int Refuse(ParseResult parsed)
     {
