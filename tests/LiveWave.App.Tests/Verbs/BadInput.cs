@@ -103,7 +103,7 @@ public sealed class BadInput
         using var bench = new Bench();
         bench.Replace("millrace.sheet.toml", "highHz = 22", "highHz = 600");
 
-        Refused(Watch(bench), "600");
+        Refused(Watch(bench), "highHz", "500");
     }
 
     [Fact]
