@@ -15,19 +15,30 @@ internal static class TomlTables
     public static ParsedTable Parse(string text, out IReadOnlyList<SheetFault> faults)
     {
         var root = new ParsedTable(line: 1);
+        if (Document(text, out faults) is { } document && faults.Count == 0) faults = new TomlTree(root).Fill(document);
+        return root;
+    }
+
+    private static DocumentSyntax? Document(string text, out IReadOnlyList<SheetFault> faults)
+    {
         try
         {
             var document = SyntaxParser.Parse(text, sourceName: null, validate: true);
             faults = [.. document.Diagnostics.Where(IsError).Select(FaultOf).DistinctBy(fault => fault.Line).OrderBy(fault => fault.Line)];
-            if (faults.Count == 0) faults = new TomlTree(root).Fill(document);
+            return document;
         }
         catch (TomlException e)
         {
             // Nesting beyond the parser's bound is thrown, not reported.
             faults = [new((e.Line ?? 0) + 1, "", "not valid TOML: " + OneLine(e.Message), "")];
         }
+        catch (ArgumentOutOfRangeException)
+        {
+            // Tomlyn 2.10.2 fails on its own message where the file's last character is a backslash inside a text.
+            faults = [new(text.Count(c => c == '\n') + 1, "", "not valid TOML: the file ends in the middle of a text", "")];
+        }
 
-        return root;
+        return null;
     }
 
     private static bool IsError(DiagnosticMessage message) => message.Kind == DiagnosticMessageKind.Error;

@@ -107,6 +107,14 @@ public sealed class SheetReaderTests
     }
 
     [Fact]
+    public void A_file_cut_off_within_an_escape_is_refused()
+    {
+        var refusal = Assert.Throws<RefusedException>(() => SheetReader.Parse(SheetTexts.Short + "wave = \"pla\\", "s.toml"));
+
+        Assert.Equal("s.toml:23: not valid TOML: the file ends in the middle of a text", refusal.Message);
+    }
+
+    [Fact]
     public void Nesting_without_end_is_refused()
     {
         var text = SheetTexts.ShortBut("lowHz = 14", "lowHz = " + new string('[', 100_000));
