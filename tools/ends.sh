@@ -12,7 +12,8 @@ program=artifacts/bin/LiveWave.App/release/livewave
 
 failed=0
 for signal in INT TERM HUP; do
-    "$program" demo --clock real --out "$out/$signal" > "$out/$signal.txt" 2> "$out/$signal.err" &
+    # A shell starts background jobs deaf to INT; a terminal does not.
+    env "--default-signal=$signal" "$program" demo --clock real --out "$out/$signal" > "$out/$signal.txt" 2> "$out/$signal.err" &
     process=$!
     for _ in $(seq 100); do                       # until the first decision stands in its table, 20 s at most
         [ -f "$out/$signal/decisions.tsv" ] && [ "$(wc -l < "$out/$signal/decisions.tsv")" -gt 1 ] && break

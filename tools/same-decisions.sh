@@ -1,7 +1,7 @@
 #!/usr/bin/env bash
 # Holds the law of decisions between processes: the same recording gives the same decisions.tsv and events.tsv, byte for byte, at the
 # recording's own pace and as fast as possible, in any block size, with narrower vectors, and under a locale with a decimal comma.
-# usage: tools/same-decisions.sh [SECONDS]   (default 5, of which each real-time run takes as many)
+# usage: tools/same-decisions.sh [SECONDS]   (default 5; the run in real time takes as many)
 set -euo pipefail
 cd "$(dirname "$0")/.."
 seconds=${1:-5}

@@ -47,7 +47,7 @@ internal static class WatchVerb
         }
 
         wiring.Ledger.Process(GC.CollectionCount(0) - collections, GC.GetTotalPauseDuration() - pause);
-        wiring.Gate.Dispose();
+        wiring.EndGate();
         foreach (var warning in wiring.FeedWarnings()) wiring.Board.Post(warning.Level, warning.Where, warning.What, warning.Advice);
         wiring.Loop.DrainAll();
         wiring.Surface.Complete();

@@ -134,11 +134,14 @@ internal sealed class WatchWiring : IDisposable
         NumericsPrint = NumericsPrint,
     };
 
-    public void Dispose()
+    /// <summary>Ends the gate: disarmed and quiet. Outcomes can still be taken.</summary>
+    public void EndGate()
     {
-        Gate.Dispose();
-        if (Clock is VirtualClock virtualClock) virtualClock.Close();
+        if (Clock is VirtualClock virtualClock) virtualClock.Close();   // senders that wait for an instant leave
+        Gate.End("the run is over");
     }
+
+    public void Dispose() => EndGate();
 
     private static string ClockWord(WatchOptions options) => options.IsRealClock ? "real" : "fast";
 

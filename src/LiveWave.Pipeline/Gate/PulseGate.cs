@@ -191,11 +191,9 @@ public sealed class PulseGate : IDisposable
     /// <param name="reason">Why; the first reason is kept.</param>
     public void DisarmWithoutWaiting(string reason)
     {
-        ArgumentException.ThrowIfNullOrEmpty(reason);
-        var before = _room.Arming.Disarm(reason);
-        CancelPending();
-        if (before.State != GateState.Disarmed)
-            _room.Notices.Tell(StatusLevel.Warning, "gate", "disarmed: " + reason, before.State == GateState.Armed ? "arm again when the cause is gone" : "");
+        var before = DisarmQuietly(reason);
+        if (before != GateState.Disarmed)
+            _room.Notices.Tell(StatusLevel.Warning, "gate", "disarmed: " + reason, before == GateState.Armed ? "arm again when the cause is gone" : "");
     }
 
     /// <summary>Ends the run: disarms for good, cancels what waits, brings every opened output to rest, lets senders leave, disposes
@@ -205,13 +203,21 @@ public sealed class PulseGate : IDisposable
     public void End(string reason)
     {
         _ = Interlocked.Exchange(ref _isEnded, 1);
-        DisarmWithoutWaiting(reason);
+        if (DisarmQuietly(reason) != GateState.Disarmed) _room.Notices.Tell(StatusLevel.Note, "gate", "disarmed: " + reason, "");
         foreach (var lane in _lanes) lane.End();
         foreach (var lane in _lanes) lane.AwaitEnd();
     }
 
     /// <summary>Ends the run, if it has not been ended. Outcomes can still be taken.</summary>
     public void Dispose() => End("the run ended");
+
+    private GateState DisarmQuietly(string reason)
+    {
+        ArgumentException.ThrowIfNullOrEmpty(reason);
+        var before = _room.Arming.Disarm(reason);
+        CancelPending();
+        return before.State;
+    }
 
     /// <summary>Tests: opens without threads; <see cref="Lane"/> steps them.</summary>
     internal void OpenOutputs()

@@ -66,6 +66,7 @@ public static class Warmup
         }
 
         loop.Finish(RunEnd.Stopped);
+        clock.Close();
         return ledger.Blocks;
     }
 

@@ -29,8 +29,8 @@ public sealed class WarmupFeed : IFeed
         _sine = new double[channels];
         _amplitude = new double[channels];
         var narrowestHz = setup.Tracks.Min(track => track.Band.HighHz - track.Band.LowHz);
-        _onRows = (int)(setup.Format.NominalRateHz * (0.08 + (1.5 / narrowestHz)));
-        _offRows = (int)(setup.Format.NominalRateHz * (0.15 + (1.6 / narrowestHz)));
+        _onRows = (int)(setup.Format.NominalRateHz * (0.07 + (1.2 / narrowestHz)));
+        _offRows = (int)(setup.Format.NominalRateHz * (0.12 + (1.0 / narrowestHz)));
     }
 
     /// <inheritdoc/>
@@ -91,7 +91,7 @@ public sealed class WarmupFeed : IFeed
         for (var i = 0; i < row.Length; i++)
         {
             var wave = envelope * ((cosine * _cosine[i]) + (sine * _sine[i]));
-            row[i] = _amplitude[i] * (wave + Noise(i));   // without noise a filter's ringing would hold the event until the next
+            row[i] = _amplitude[i] * (wave + (1.5 * Noise(i)));   // without noise a filter's ringing would hold the event until the next
         }
     }
 

@@ -74,6 +74,7 @@ internal sealed class Rig
             Checks = true,
         });
         for (var turn = 0; loop.RunOnce(); turn++) meanwhile?.Invoke(turn, gate);
+        clock.Close();
         gate.End("the test is over");
         loop.DrainAll();
         return rig;
