@@ -2,8 +2,8 @@
 
 usage: wave_vectors.py STUDY DSP_GOLDEN PIPELINE_GOLDEN          (Python 3, standard library only)
 
-Cuts from the golden files of our wave study, made by its reference programme (numpy 1.24 or later, scipy 1.10 or later), what the tests
-need: waves.json into DSP_GOLDEN, events.json into PIPELINE_GOLDEN. Nothing is computed here.
+Cuts from the golden files of our wave study, made by its reference programme (numpy 1.24 or later, scipy 1.10 or later),
+what the tests need: waves.json into DSP_GOLDEN, events.json into PIPELINE_GOLDEN. Nothing is computed here.
   layouts     positions and what follows from them (study section 3)
   frames      one-frame inputs with the whitened statistics (4.6-4.8) and the label at a threshold of 5.0
   quadrature  in-phase and travelling frames with both gates (4.8b) and the label at a threshold of 1.0

@@ -1,3 +1,5 @@
+using System.Runtime.Intrinsics;
+
 namespace LiveWave.Dsp;
 
 /// <summary>Takes channels that are missing from a frame out of all products with the inverse covariance Q.</summary>
@@ -67,11 +69,8 @@ internal sealed class MissingChannels
         for (var m = 0; m < Count; m++)
         {
             var row = _whitening.Row(_channels[m]);
-            for (var i = 0; i < row.Length; i++)
-            {
-                re[i] -= row[i] * _re[m];
-                im[i] -= row[i] * _im[m];
-            }
+            Subtract(row, _re[m], re);
+            Subtract(row, _im[m], im);
         }
 
         for (var m = 0; m < Count; m++) re[_channels[m]] = im[_channels[m]] = 0;
@@ -85,6 +84,18 @@ internal sealed class MissingChannels
         for (var m = 0; m < Count; m++) gathered[m] = product[_channels[m]];
         Cholesky.Forward(_factor, Count, gathered);
         return Sums.Dot(gathered, gathered);
+    }
+
+    private static void Subtract(ReadOnlySpan<double> row, double times, Span<double> from)
+    {
+        var i = 0;
+        for (; i <= row.Length - 4; i += 4)
+        {
+            var part = from.Slice(i, 4);
+            (Vector256.Create<double>(part) - Vector256.Create(row.Slice(i, 4)) * Vector256.Create(times)).CopyTo(part);
+        }
+
+        for (; i < row.Length; i++) from[i] -= row[i] * times;
     }
 
     private void Solve(Span<double> v)
