@@ -14,7 +14,7 @@ public sealed class SheetDamageTests
         "[x]\n", "[[band]]\n", "[rule]\n", "[band.wave.event]\n", "phase.order = 1\n", "\0", "\uFEFF", "\u2028", "é", "name = \"quill\"\n",
     ];
 
-    [Property(MaxTest = 2000)]
+    [Property(Replay = "2026,1201", MaxTest = 2000)]
     public Property A_damaged_sheet_is_read_or_refused() => Prop.ForAll(Damaged.ToArbitrary(), text =>
     {
         var thrown = Record.Exception(() => SheetReader.Parse(text, "s.toml"));

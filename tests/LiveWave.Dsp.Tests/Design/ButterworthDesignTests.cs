@@ -7,7 +7,7 @@ public class ButterworthDesignTests
 {
     private const double RateHz = 1000;
 
-    [Property(MaxTest = 300)]
+    [Property(Replay = "2026,1201", MaxTest = 300)]
     public bool A_low_pass_has_the_closed_form_s_gain_everywhere(uint a, uint b, uint c)
     {
         var (order, edge, at) = ((int)(a % 8) + 1, Between(b, 2, 480), Between(c, 1, 490));
@@ -16,7 +16,7 @@ public class ButterworthDesignTests
         return IsNear(GainOf(design, at), 1 / Math.Sqrt(1 + Math.Pow(Warped(at) / Warped(edge), 2 * order)));
     }
 
-    [Property(MaxTest = 300)]
+    [Property(Replay = "2026,1201", MaxTest = 300)]
     public bool A_high_pass_has_the_closed_form_s_gain_everywhere(uint a, uint b, uint c)
     {
         var (order, edge, at) = ((int)(a % 8) + 1, Between(b, 2, 480), Between(c, 1, 490));
@@ -25,7 +25,7 @@ public class ButterworthDesignTests
         return IsNear(GainOf(design, at), 1 / Math.Sqrt(1 + Math.Pow(Warped(edge) / Warped(at), 2 * order)));
     }
 
-    [Property(MaxTest = 300)]
+    [Property(Replay = "2026,1201", MaxTest = 300)]
     public bool A_band_pass_has_the_closed_form_s_gain_everywhere(uint a, uint b, uint c, uint d)
     {
         var (order, low, at) = ((int)(a % 6) + 1, Between(b, 4, 300), Between(c, 1, 490));
@@ -36,7 +36,7 @@ public class ButterworthDesignTests
         return IsNear(GainOf(design, at), 1 / Math.Sqrt(1 + Math.Pow(((w * w) - (w1 * w2)) / (w * (w2 - w1)), 2 * order)));
     }
 
-    [Property(MaxTest = 300)]
+    [Property(Replay = "2026,1201", MaxTest = 300)]
     public bool The_declared_group_delay_is_the_slope_of_the_phase(uint a, uint b, uint c)
     {
         var (order, low, at) = ((int)(a % 4) + 1, Between(b, 5, 300), Between(c, 3, 490));

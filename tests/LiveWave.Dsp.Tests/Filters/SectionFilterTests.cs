@@ -7,7 +7,7 @@ public class SectionFilterTests
 {
     private static readonly SecondOrderSections Band = ButterworthDesign.BandPass(2, 8, 12, 1000);
 
-    [Property(MaxTest = 60)]
+    [Property(Replay = "2026,1201", MaxTest = 60)]
     public bool Every_channel_is_filtered_as_if_it_were_alone(ushort draw)
     {
         var channelCount = (draw % 37) + 1;
@@ -29,7 +29,7 @@ public class SectionFilterTests
         return true;
     }
 
-    [Property(MaxTest = 60)]
+    [Property(Replay = "2026,1201", MaxTest = 60)]
     public bool Scaling_the_input_by_a_power_of_two_scales_the_output_and_nothing_else(ushort draw)
     {
         var rows = Signals.Noise(draw, 100, 3);

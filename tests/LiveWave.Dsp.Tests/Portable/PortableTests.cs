@@ -8,7 +8,7 @@ public class PortableTests
 {
     private const int Allowed = 2;
 
-    [Property(MaxTest = 2000)]
+    [Property(Replay = "2026,1201", MaxTest = 2000)]
     public bool Any_number_gives_what_the_C_library_gives(double x, double y) =>
         Ulps.Between(Portable.Sin(x), Math.Sin(x)) <= Allowed
         && Ulps.Between(Portable.Cos(x), Math.Cos(x)) <= Allowed
@@ -104,14 +104,14 @@ public class PortableTests
         Assert.InRange(worst, 0, Allowed);
     }
 
-    [Property(MaxTest = 1000)]
+    [Property(Replay = "2026,1201", MaxTest = 1000)]
     public bool Odd_functions_are_odd_and_even_ones_even_to_the_last_bit(double x, double y) =>
         Same(Portable.Sin(-x), -Portable.Sin(x))
         && Same(Portable.Tan(-x), -Portable.Tan(x))
         && Same(Portable.Cos(-x), Portable.Cos(x))
         && Same(Portable.Atan2(-y, x), -Portable.Atan2(y, x));
 
-    [Property(MaxTest = 1000)]
+    [Property(Replay = "2026,1201", MaxTest = 1000)]
     public bool Sine_and_cosine_together_are_those_taken_alone(double x) =>
         Same(Portable.SinCos(x).Sin, Portable.Sin(x)) && Same(Portable.SinCos(x).Cos, Portable.Cos(x));
 
@@ -155,7 +155,7 @@ public class PortableTests
         Assert.True(double.IsNegative(Portable.Sin(-0.0)) && double.IsNegative(Portable.Tan(-0.0)));
     }
 
-    [Property(MaxTest = 1000)]
+    [Property(Replay = "2026,1201", MaxTest = 1000)]
     public bool A_length_has_the_very_bits_of_the_plain_formula_in_ordinary_ranges(int x, int y) =>
         Same(Portable.Hypot(x * 0.37, y * 0.11), Math.Sqrt((x * 0.37 * (x * 0.37)) + (y * 0.11 * (y * 0.11))));
 

@@ -4,7 +4,7 @@ namespace LiveWave.Dsp.Tests;
 
 public class SumsTests
 {
-    [Property(MaxTest = 500)]
+    [Property(Replay = "2026,1201", MaxTest = 500)]
     public bool Sums_are_those_of_eight_plain_lanes_to_the_last_bit(double[] a, int cut)
     {
         a = [.. a.Where(double.IsFinite), 0.1, 1e16, -3, 0.7, 1e-9, 2.5, -1e16, 1.25, 0.3];

@@ -9,7 +9,7 @@ public class PlanarEstimatorTests
 
     private static readonly Layout Array = WaveFrames.Grid(8, 8);
 
-    [Property(MaxTest = 40)]
+    [Property(Replay = "2026,1201", MaxTest = 40)]
     public bool Direction_and_wavelength_are_those_of_the_wave(ushort direction, byte stretch)
     {
         var degrees = direction % 3600 / 10.0;

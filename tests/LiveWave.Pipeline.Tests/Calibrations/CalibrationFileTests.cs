@@ -190,7 +190,7 @@ public sealed class CalibrationFileTests : IDisposable
         for (var length = 0; length < CalibrationDocument.Text.Length - 1; length += 7) Refusal(CalibrationDocument.Text[..length]);
     }
 
-    [Property(MaxTest = 300)]
+    [Property(Replay = "2026,1201", MaxTest = 300)]
     public void A_changed_letter_is_read_or_refused_and_nothing_else(NonNegativeInt place, byte letter)
     {
         var bytes = System.Text.Encoding.UTF8.GetBytes(CalibrationDocument.Text);

@@ -13,16 +13,16 @@ public sealed class GateModelTests
     private const int PerSession = 9;
     private const int ShortestUnits = 4;
 
-    [Property(MaxTest = 200)]
+    [Property(Replay = "2026,1201", MaxTest = 200)]
     public void A_gate_that_may_be_armed_follows_its_model(byte[] script) => Follow(script, mayBeArmed: true, isDummy: false);
 
-    [Property(MaxTest = 100)]
+    [Property(Replay = "2026,1201", MaxTest = 100)]
     public void A_gate_with_dummies_that_may_be_armed_follows_its_model(byte[] script) => Follow(script, mayBeArmed: true, isDummy: true);
 
-    [Property(MaxTest = 100)]
+    [Property(Replay = "2026,1201", MaxTest = 100)]
     public void A_gate_that_may_only_rehearse_follows_its_model(byte[] script) => Follow(script, mayBeArmed: false, isDummy: false);
 
-    [Property(MaxTest = 100)]
+    [Property(Replay = "2026,1201", MaxTest = 100)]
     public void A_gate_with_dummies_that_may_only_rehearse_follows_its_model(byte[] script) => Follow(script, mayBeArmed: false, isDummy: true);
 
     private static void Follow(byte[] script, bool mayBeArmed, bool isDummy)

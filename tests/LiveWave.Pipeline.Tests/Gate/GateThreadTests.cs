@@ -110,7 +110,7 @@ public sealed class GateThreadTests
         Assert.False(bench.Gate.AwaitSettled(TimeSpan.FromMilliseconds(1)));
     }
 
-    [Property(MaxTest = 150)]
+    [Property(Replay = "2026,1201", MaxTest = 150)]
     public void Whatever_happens_every_pulse_ends_once_and_none_is_sent_that_must_not(byte[] decisionScript, byte[] operatorScript)
     {
         using var scene = new GateScene();

@@ -52,7 +52,7 @@ public sealed class DecisionLaws
         Assert.NotEqual(one.Select(decision => decision.Lot), two.Select(decision => decision.Lot));
     }
 
-    [Property(MaxTest = 25)]
+    [Property(Replay = "2026,1201", MaxTest = 25)]
     public void Outcomes_never_change_decisions(byte[] script, bool throws, bool isBusy)
     {
         var output = new MoodyOutput(throws, isBusy);

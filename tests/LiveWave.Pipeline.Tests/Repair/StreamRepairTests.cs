@@ -61,7 +61,7 @@ public sealed class StreamRepairTests
         Assert.Equal(RowBreaks.Restart, rows[2].Breaks);
     }
 
-    [Property(MaxTest = 200)]
+    [Property(Replay = "2026,1201", MaxTest = 200)]
     public bool Rows_are_placed_alike_whatever_the_block_size(byte[] steps, byte blockRows)
     {
         var stamps = new double[steps.Length + 1];

@@ -4,7 +4,7 @@ namespace LiveWave.Pipeline.Tests;
 
 public sealed class OneProducerRingTests
 {
-    [Property(MaxTest = 300)]
+    [Property(Replay = "2026,1201", MaxTest = 300)]
     public bool A_ring_behaves_like_a_queue_that_refuses_what_does_not_fit(bool[] offers)
     {
         var ring = new OneProducerRing<int>(8);
