@@ -1,4 +1,5 @@
 using System.Text.Json.Nodes;
+using LiveWave.Recordings;
 
 namespace LiveWave.App.Tests;
 
@@ -40,6 +41,24 @@ public sealed class DemoTests : IClassFixture<DemoTests.WholeDemo>
         Assert.Equal(approved.ReplaceLineEndings("\n"), File.ReadAllText(_demo.At("decisions.tsv")));
     }
 
+    /// <summary>Outside check: the reference chain in Python (numpy 1.24.2, SciPy 1.10.1, <c>tools/golden/millrace</c>) on the same file.</summary>
+    [Fact]
+    public void Its_events_begin_and_pass_at_the_frames_of_the_reference_chain_and_point_where_it_points()
+    {
+        var reference = JsonNode.Parse(File.ReadAllText(Path.Combine(AppContext.BaseDirectory, "Golden", "millrace.reference.json")))!["events"]!.AsArray();
+        var events = BidsTable.Read(_demo.At("events.tsv"));
+
+        Assert.Equal(reference.Count, events.RowCount);
+        for (var i = 0; i < reference.Count; i++)
+        {
+            var expected = reference[i]!;
+            Assert.Equal((int)expected["onsetFrame"]!, Frame(events.Number(i, "onset")));
+            Assert.Equal((int)expected["triggerFrame"]!, Frame(events.Number(i, "passed")));
+            Assert.Equal((double)expected["directionDegrees"]!, events.Number(i, "direction_degrees"), 0.01);
+            Assert.Equal((double)expected["seAtTrigger"]!, events.Number(i, "direction_standard_error_degrees"), 0.01);
+        }
+    }
+
     [Fact]
     public void The_decision_thread_allocates_nothing_while_it_judges() =>
         Assert.Equal(0, (long)_demo.Summary["decisionThreadBytes"]!);
@@ -75,6 +94,8 @@ public sealed class DemoTests : IClassFixture<DemoTests.WholeDemo>
         Assert.Contains("--from", ProgramRun.Of("watch", "--help").Output, StringComparison.Ordinal);
         Assert.Contains("directionDegrees", ProgramRun.Of("watch", "--keys").Output, StringComparison.Ordinal);
     }
+
+    private static int Frame(double seconds) => (int)Math.Round(seconds * 250);
 
     public sealed class WholeDemo : IDisposable
     {
