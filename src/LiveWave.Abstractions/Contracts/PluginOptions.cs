@@ -66,8 +66,8 @@ public sealed class PluginOptions
     {
         _ = _asked.Add(key);
         if (!_values.TryGetValue(key, out var value)) return otherwise;
-        return value is T typed
-            ? typed
-            : throw new RefusedException($"'{key}' has the wrong type", Where, $"give a {(typeof(T) == typeof(double) ? "number" : typeof(T) == typeof(bool) ? "true or false" : "text")}");
+        if (value is T typed) return typed;
+        var wanted = typeof(T) == typeof(double) ? "a number" : typeof(T) == typeof(bool) ? "true or false" : "a text";
+        throw new RefusedException($"'{key}' has the wrong type", Where, $"give {wanted}");
     }
 }

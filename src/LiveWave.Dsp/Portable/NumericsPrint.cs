@@ -52,15 +52,17 @@ public static class NumericsPrint
             foreach (var value in now.Im) hash = Add(hash, value);
             if (n % samplesPerFrame != 0) continue;
             waves.Read(now, ref reading);
-            foreach (var value in (ReadOnlySpan<double>)
-                [reading.Statistic, reading.DirectionDegrees, reading.WaveVectorX, reading.WaveVectorY, reading.GainOverUniform, reading.GainOutOfPhase, reading.LocalFrequencyHz, reading.SlownessMiddle])
-            {
-                hash = Add(hash, value);
-            }
+            foreach (var value in Values(reading)) hash = Add(hash, value);
         }
 
         return hash.ToString("x16", CultureInfo.InvariantCulture);
     }
+
+    private static double[] Values(in Reading reading) =>
+    [
+        reading.Statistic, reading.DirectionDegrees, reading.DirectionStandardErrorDegrees, reading.WaveVectorX, reading.WaveVectorY,
+        reading.GainOverUniform, reading.GainOutOfPhase, reading.LocalFrequencyHz, reading.SlownessLow, reading.SlownessMiddle,
+    ];
 
     // A wave that turns slowly over the array, on noise from lots: it passes every branch of the estimators.
     private static void Fill(double[] row, int n)
