@@ -25,7 +25,9 @@ internal static class EdfExtent
         if (promised > held) warnings.Add(promisedAt, $"the header says {promised} data records", $"the file holds {held}");
         var records = promised < 0 ? held : Math.Min(promised, held);
         var end = header.RecordStart(records);
-        if (window.Length > end) warnings.Add(end, records == held ? "the last data record is incomplete" : "the file goes on behind its last data record", window.Length - end);
+        if (window.Length == end) return records;
+        var what = records == held ? "the last data record is incomplete" : "the file goes on behind its last data record";
+        warnings.Add(end, what, window.Length - end);
         return records;
     }
 
