@@ -153,7 +153,7 @@ public sealed class EdfFeedTests : IDisposable
     public void A_data_record_larger_than_any_buffer_is_read_piece_by_piece()
     {
         const int Samples = 700_000;
-        int[] values = [.. Enumerable.Range(0, Samples).Select(i => (i * 7 % 65536) - 32768)];
+        int[] values = [.. Enumerable.Range(0, Samples).Select(i => (i * 7 % 65521) - 32768)];
         int[] others = [.. values.Select(value => -1 - value)];
         var path = Write(EdfBuilder.Plus("C").Signal("a", Samples).Annotations().Signal("b", Samples)
             .Record(values, EdfBuilder.Time("+0"), others).Record(others, EdfBuilder.Time("+1"), values));
