@@ -6,4 +6,5 @@ namespace LiveWave.Recordings;
 /// <param name="Conversion">Physical units per number in the file; 1 where the file gives none.</param>
 /// <param name="XMm">Position in mm, to the right; NaN where the file gives none.</param>
 /// <param name="YMm">Position in mm, upwards; NaN where the file gives none.</param>
-public sealed record RecordedChannel(string Label, string Unit, double Conversion, double XMm, double YMm);
+/// <param name="Offset">Physical value of the number 0; 0 where the file gives none.</param>
+public sealed record RecordedChannel(string Label, string Unit, double Conversion, double XMm, double YMm, double Offset = 0);

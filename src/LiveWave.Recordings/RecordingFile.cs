@@ -3,7 +3,8 @@ using LiveWave.Abstractions;
 namespace LiveWave.Recordings;
 
 /// <summary>A recording on disk, known by its content and not by its name: which streams it holds, and a feed for one of them.</summary>
-/// <remarks>Holds no open file. Not for the decision path: opening reads every chunk header of the file.</remarks>
+/// <remarks>Holds no open file. Not for the decision path: opening reads every chunk header of the file, or the time of
+/// every data record.</remarks>
 public abstract class RecordingFile
 {
     /// <summary>Describes a recording.</summary>
@@ -32,8 +33,12 @@ public abstract class RecordingFile
     public static RecordingFile Open(string path)
     {
         using var window = FileWindow.Open(path, FileWindow.ScanBytes);
-        FileKind.RequireXdf(window, path);
-        return XdfFile.Scan(window, path);
+        return FileKind.Tell(window, path) switch
+        {
+            RecordingKind.Edf => EdfFile.Scan(window, path, RecordingKind.Edf),
+            RecordingKind.Bdf => EdfFile.Scan(window, path, RecordingKind.Bdf),
+            _ => XdfFile.Scan(window, path),
+        };
     }
 
     /// <summary>Opens one stream from its first row on.</summary>

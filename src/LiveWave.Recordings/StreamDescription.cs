@@ -24,6 +24,9 @@ public sealed record StreamDescription(
     IReadOnlyList<RecordedChannel> Channels,
     string Problem)
 {
+    /// <summary>Rows the file holds, before what damage takes of them; null where only reading tells.</summary>
+    public long? RowCount { get; init; }
+
     /// <summary>True if it can be read as a signal: numbers at a regular rate.</summary>
     public bool IsRegularSignal => Problem.Length == 0 && Wire is not null && NominalRateHz > 0;
 
@@ -57,7 +60,7 @@ public sealed record StreamDescription(
         {
             var told = i < Channels.Count ? Channels[i] : new RecordedChannel("", "", 1, double.NaN, double.NaN);
             if (told.Label.Length == 0) unnamed++;
-            channels[i] = new ChannelFormat(Unique(told.Label, i, labels, warnings), told.Unit, told.Conversion);
+            channels[i] = new ChannelFormat(Unique(told.Label, i, labels, warnings), told.Unit, told.Conversion, told.Offset);
         }
 
         if (unnamed > 0)

@@ -19,8 +19,8 @@ public sealed class RecordingFileTests : IDisposable
     [Theory]
     [InlineData("", "the file is empty")]
     [InlineData("XD", "its first bytes are 58 44 ('XD')")]
-    [InlineData("time,value\n1,2\n", "its first bytes are 74 69 6D 65 2C 76 61 6C ('time,val'); give an XDF recording")]
-    [InlineData("0       subject", "it looks like EDF")]
+    [InlineData("time,value\n1,2\n", "its first bytes are 74 69 6D 65 2C 76 61 6C ('time,val'); give a recording in XDF, EDF or BDF")]
+    [InlineData("0       ", "the file ends inside its header: 8 bytes of 256")]
     public void A_file_of_another_kind_is_told_by_its_first_bytes(string content, string said)
     {
         Assert.Contains(said, Refusal(_folder.Write("recording.xdf", content)));
@@ -28,7 +28,8 @@ public sealed class RecordingFileTests : IDisposable
 
     [Theory]
     [InlineData(new byte[] { 0x1F, 0x8B, 8, 0 }, "compressed")]
-    [InlineData(new byte[] { 0xFF, 0x42, 0x49, 0x4F }, "BDF")]
+    [InlineData(new byte[] { 0xFF, 0x42, 0x49, 0x4F }, "BDF with FF")]
+    [InlineData(new byte[] { 0xEF, 0xBF, 0xBD, 0x42 }, "a transfer as text has replaced bytes (EF BF BD)")]
     [InlineData(new byte[] { 0x89, 0x48, 0x44, 0x46 }, "HDF5 or NWB")]
     public void A_file_of_a_known_other_kind_is_called_by_its_name(byte[] content, string said)
     {

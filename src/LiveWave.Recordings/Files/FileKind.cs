@@ -8,29 +8,37 @@ internal static class FileKind
 {
     private const int Looked = 8;
 
-    /// <summary>Lets XDF pass and says of everything else what it seems to be.</summary>
+    // Prescribed by the format: FF and seven letters.
+    private static ReadOnlySpan<byte> BdfVersion => [0xFF, 0x42, 0x49, 0x4F, 0x53, 0x45, 0x4D, 0x49];
+
+    /// <summary>Tells the kinds that are read apart, and says of everything else what it seems to be.</summary>
     /// <param name="window">The file.</param>
     /// <param name="path">As the user gave it.</param>
-    /// <exception cref="RefusedException">The file is not XDF.</exception>
-    public static void RequireXdf(FileWindow window, string path)
+    /// <exception cref="RefusedException">The file is of no kind that is read.</exception>
+    public static RecordingKind Tell(FileWindow window, string path)
     {
         var first = window.Peek(0, Looked);
-        if (first.StartsWith("XDF:"u8)) return;
+        if (first.StartsWith("XDF:"u8)) return RecordingKind.Xdf;
+        if (first.SequenceEqual("0       "u8)) return RecordingKind.Edf;
+        if (first.SequenceEqual(BdfVersion)) return RecordingKind.Bdf;
         if (first.IsEmpty) throw new RefusedException("the file is empty", path, "give a recording");
-        throw new RefusedException($"not an XDF file: its first bytes are {Shown(first)}", path, Advice(first));
+        throw new RefusedException($"not a recording that can be read: its first bytes are {Shown(first)}", path, Advice(first));
     }
 
     private static string Advice(ReadOnlySpan<byte> first)
     {
         if (first.StartsWith((ReadOnlySpan<byte>)[0x1F, 0x8B])) return "it is compressed (gzip): unpack it first";
-        if (first.SequenceEqual("0       "u8)) return "it looks like EDF, which can't be read yet: give an XDF recording";
-        if (first[0] == 0xFF) return "it looks like BDF, which can't be read yet: give an XDF recording";
-        if (first.StartsWith((ReadOnlySpan<byte>)[0x89, 0x48, 0x44, 0x46]))
+        if (first.StartsWith((ReadOnlySpan<byte>)[0xEF, 0xBF, 0xBD]))
         {
-            return "it looks like HDF5 or NWB, which can't be read yet: give an XDF recording";
+            return "a transfer as text has replaced bytes (EF BF BD): copy the original again, as binary";
         }
 
-        return "give an XDF recording, which begins with 'XDF:'";
+        if (first.StartsWith((ReadOnlySpan<byte>)[0x89, 0x48, 0x44, 0x46]))
+        {
+            return "it looks like HDF5 or NWB, which can't be read yet: give a recording in XDF, EDF or BDF";
+        }
+
+        return "give a recording in XDF, EDF or BDF; XDF begins with 'XDF:', EDF with '0' and seven blanks, BDF with FF";
     }
 
     private static string Shown(ReadOnlySpan<byte> bytes)

@@ -66,6 +66,17 @@ internal sealed class FileWindow : IDisposable
         return _buffer.AsSpan(offset, Math.Clamp(_count - offset, 0, count));
     }
 
+    /// <summary>Copies bytes of the file: from the buffer where it holds all of them, else past it.</summary>
+    /// <param name="position">Of the first one, from 0.</param>
+    /// <param name="into">Filled.</param>
+    /// <returns>Bytes copied; fewer at the end of the file.</returns>
+    public int Read(long position, Span<byte> into)
+    {
+        if (position < _start || position + into.Length > _start + _count) return ReadFully(into, position);
+        _buffer.AsSpan((int)(position - _start), into.Length).CopyTo(into);
+        return into.Length;
+    }
+
     /// <summary>Copies bytes of the file past the buffer. Allocates.</summary>
     /// <param name="position">Of the first one, from 0.</param>
     /// <param name="count">How many; the caller has compared it with <see cref="Length"/>.</param>

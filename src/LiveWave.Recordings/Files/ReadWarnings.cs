@@ -25,6 +25,19 @@ internal sealed class ReadWarnings(string path)
     public void Add(long offset, string what, long skippedBytes) =>
         Add($"{path}, byte {offset}", what, skippedBytes > 0 ? $"{skippedBytes} bytes skipped" : "");
 
+    /// <summary>Says something about a place in the file.</summary>
+    /// <param name="offset">First byte concerned, from 0.</param>
+    /// <param name="what">One sentence.</param>
+    /// <param name="advice">What was done, or what to do.</param>
+    public void Add(long offset, string what, string advice) => Add($"{path}, byte {offset}", what, advice);
+
+    /// <summary>Takes over what was said before.</summary>
+    /// <param name="earlier">From another list about the same file.</param>
+    public void AddAll(IReadOnlyList<Status> earlier)
+    {
+        foreach (var one in earlier) Add(one.Where, one.What, one.Advice);
+    }
+
     private void Add(string where, string what, string advice)
     {
         if (_all.Count > Most) return;
