@@ -118,7 +118,7 @@ internal static class SummaryText
     {
         var kinds = Enum.GetValues<OutcomeKind>().Where(kind => kind != OutcomeKind.NothingDue);
         var counted = kinds.Select(kind => (DecisionWords.Outcome(kind), tally.CountOf(kind))).Where(pair => pair.Item2 > 0).ToList();
-        return Counted(counted, counted.Sum(pair => pair.Item2), "pulses and shams");
+        return Counted(counted, counted.Sum(pair => pair.Item2), "pulses and shams, each counted once per output");
     }
 
     private static string Counted(IEnumerable<(string Word, int Count)> counts, int n, string what) =>

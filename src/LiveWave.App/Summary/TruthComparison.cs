@@ -24,7 +24,7 @@ internal sealed class TruthComparison
         WeakFound = pairs.Count(pair => !pair.Row.IsStrong && pair.Event is not null);
         Decoys = decoys.Count;
         DecoysTaken = decoys.Count(row => travelling.Any(wave => Begins(wave, row)));
-        Stray = travelling.Count(wave => !seen.Any(row => Overlaps(wave, row)));
+        Stray = travelling.Count(wave => !truth.Any(row => Overlaps(wave, row)));   // also of what had not ended
         var found = pairs.Where(pair => pair.Row.IsStrong).Where(pair => pair.Event is not null).ToList();
         MedianDirectionErrorDegrees = Median([.. found.Select(pair => Error(pair.Event!.Value, pair.Row))]);
         MedianDelayMs = Median([.. found.Select(pair => 1000 * (Passed(pair.Event!.Value) - pair.Row.OnsetSeconds))]);

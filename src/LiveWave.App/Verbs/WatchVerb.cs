@@ -40,16 +40,23 @@ internal static class WatchVerb
         foreach (var note in wiring.Notes) wiring.Board.Post(note.Level, note.Where, note.What, note.Advice);
         var collections = GC.CollectionCount(0);
         var pause = GC.GetTotalPauseDuration();
-        thread.Start();
-        using (var progress = new ProgressLine(wiring.Loop, isShown: !options.Json))
+        wiring.Gate.Open();   // under the guard: from here on every way out brings the outputs to rest
+        try
         {
+            thread.Start();
+            using var progress = new ProgressLine(wiring.Loop, isShown: !options.Json);
             while (!thread.Wait(Turn)) progress.Show();
+        }
+        finally
+        {
+            wiring.EndGate();   // first, whatever ended it: the guard and the threads are taken down after it
         }
 
         wiring.Ledger.Process(GC.CollectionCount(0) - collections, GC.GetTotalPauseDuration() - pause);
-        wiring.EndGate();
         foreach (var warning in wiring.FeedWarnings()) wiring.Board.Post(warning.Level, warning.Where, warning.What, warning.Advice);
         wiring.Loop.DrainAll();
+        recorder.Dispose();       // writes the rest ...
+        wiring.Loop.DrainAll();   // ... and what it could not write is told
         wiring.Surface.Complete();
         LatencyFiles.Write(folder, wiring.Ledger, began, WallClock.Time.GetLocalNow());
         if (thread.Failure is { } failure)

@@ -78,8 +78,9 @@ internal sealed class CalibrationChoice
         var where = $"patch '{patch.Name}', band '{band.Name}'";
         var calibration = Read(sheet, sheet.Patches[number], patch, band, format, where);
         if (calibration.Noise is null) _withoutNoise.Add(where);
-        foreach (var threshold in calibration.Thresholds) _chance.Add(new ChanceRate(where, threshold));
-        _chosen.Add((number, band.Name), WithOwnThreshold(calibration, band.Waves[0].Event.Enter));
+        var used = WithOwnThreshold(calibration, band.Waves[0].Event.Enter);
+        foreach (var threshold in used.Thresholds) _chance.Add(new ChanceRate(where, threshold));   // measured rates hold at the calibrated threshold alone
+        _chosen.Add((number, band.Name), used);
     }
 
     private Calibration Read(SessionSheet sheet, PatchTable table, PatchSetup patch, BandTable band, StreamFormat format, string where)

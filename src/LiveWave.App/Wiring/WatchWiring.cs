@@ -9,6 +9,9 @@ namespace LiveWave.App;
 /// <remarks>sheet, recording → patches and calibrations → setup → warm-up on a clone → feed at a pace, gate, surface → loop.</remarks>
 internal sealed class WatchWiring : IDisposable
 {
+    // Between the clock's start and the first pull lie outputs to open and files to make: so long before the first row is due.
+    private const double HeadStartSeconds = 0.5;
+
     private readonly SessionSheet _sheet;
     private readonly RecordingFeed _recording;
 
@@ -17,6 +20,9 @@ internal sealed class WatchWiring : IDisposable
         _sheet = sheet;
         _recording = recording;
     }
+
+    /// <summary>Stamp of the first row.</summary>
+    public required double FirstStampSeconds { get; init; }
 
     public required RunSetup Setup { get; init; }
 
@@ -45,20 +51,23 @@ internal sealed class WatchWiring : IDisposable
     /// <summary>What is worth knowing before the first block.</summary>
     public IReadOnlyList<Status> Notes => Calibrations.Notes;
 
+    /// <summary>Makes everything; opens no output.</summary>
     public static WatchWiring Make(SessionSheet sheet, RecordingFeed recording, double firstStampSeconds, WatchOptions options)
     {
         var stopwatch = new RealClock();
-        IClock clock = options.IsRealClock ? new RealClock(firstStampSeconds) : new VirtualClock(firstStampSeconds);
         var catalog = BuiltInParts.Catalog();
         var patches = sheet.Patches.Select(patch => PatchReader.Read(sheet, patch, recording.Format)).ToList();
         var calibrations = CalibrationChoice.Make(sheet, patches, recording.Format);
         var sessionId = options.SessionId ?? NewSessionId(sheet);
-        var setup = new RunSetupBuilder(sheet, recording.Format, catalog, clock).Build(patches, calibrations.Of, sessionId);
-        var warmup = Pipeline.Warmup.Run(setup, stopwatch);
+        RunSetup SetupOn(IClock clock) => new RunSetupBuilder(sheet, recording.Format, catalog, clock).Build(patches, calibrations.Of, sessionId);
+        var warmup = Pipeline.Warmup.Run(SetupOn(stopwatch), stopwatch);
+
+        // Not before the warm-up, which takes seconds: rows would be due already, and their pulses late.
+        IClock clock = options.IsRealClock ? new RealClock(firstStampSeconds - HeadStartSeconds) : new VirtualClock(firstStampSeconds);
+        var setup = SetupOn(clock);
         var board = new StatusBoard(clock);
         var surface = new RunSurface(board);
         var gate = new PulseGate(Outputs(sheet, catalog, clock), clock, Limits(sheet));
-        gate.Open();
         var ledger = new LatencyLedger(Budget(sheet));
         var loop = new StreamLoop(setup, new RunParts
         {
@@ -74,6 +83,7 @@ internal sealed class WatchWiring : IDisposable
         });
         return new WatchWiring(sheet, recording)
         {
+            FirstStampSeconds = firstStampSeconds,
             Setup = setup,
             Calibrations = calibrations,
             Warmup = warmup,
@@ -176,7 +186,6 @@ internal sealed class WatchWiring : IDisposable
     {
         var path = TruthTable.PathBeside(recording);
         if (!File.Exists(path) || double.IsNaN(Loop.NewestStampSeconds)) return null;
-        var first = Loop.NewestStampSeconds - ((Loop.Rows + Loop.Repair.LostRows - 1) / Setup.Format.NominalRateHz);
-        return new TruthComparison(TruthTable.Read(path), tally.Waves, first, Loop.NewestStampSeconds);
+        return new TruthComparison(TruthTable.Read(path), tally.Waves, FirstStampSeconds, Loop.NewestStampSeconds);
     }
 }

@@ -34,6 +34,8 @@ public sealed class SteppedFeed(IFeed inner, VirtualClock clock, PulseGate gate)
 
     private void StepDueUntil(double newest)
     {
+        // What the last block committed may be at its last instant already, where it is no longer pending.
+        if (!gate.AwaitSettled(SenderPatience)) return;
         for (var due = gate.NextDueSeconds; due <= newest; due = gate.NextDueSeconds)
         {
             clock.MoveTo(due);

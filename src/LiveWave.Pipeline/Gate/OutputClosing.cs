@@ -4,8 +4,9 @@ namespace LiveWave.Pipeline;
 /// either may be stuck itself, and whoever asked for it may not wait.</summary>
 /// <param name="output">The output.</param>
 /// <param name="settling">Where to tell that it is closed.</param>
+/// <param name="isIdle">No send is under way.</param>
 /// <param name="fail">Told why the output did not come to rest.</param>
-internal sealed class OutputClosing(GateOutput output, Settling settling, Action<string> fail)
+internal sealed class OutputClosing(GateOutput output, Settling settling, Func<bool> isIdle, Action<string> fail)
 {
     private int _isStarted;
     private volatile bool _isClosed;
@@ -16,7 +17,7 @@ internal sealed class OutputClosing(GateOutput output, Settling settling, Action
     /// <summary>Both calls were made, and returned or used up their patience.</summary>
     internal bool IsClosed => _isClosed;
 
-    /// <summary>How long closing may take in all: the sender, quiet, dispose.</summary>
+    /// <summary>How long closing may take in all: the send under way, quiet, the sender, dispose.</summary>
     internal static TimeSpan Longest(TimeSpan patience) => (4 * patience) + TimeSpan.FromSeconds(1);   // a second to start threads
 
     /// <summary>The output is about to be opened. One that never was is not asked to be quiet: it touched no device.</summary>
@@ -35,6 +36,9 @@ internal sealed class OutputClosing(GateOutput output, Settling settling, Action
 
     private void Close(Thread? sender)
     {
+        // A send whose last questions were answered before the run was disarmed may be about to start: brought to rest before it,
+        // the output would not be at rest after it.
+        if (sender is not null) _ = settling.Await(isIdle, Patience);
         if (_needsQuiet) Bounded("quiet", output.Output.Quiet);
         _ = sender?.Join(Patience);
         Bounded("dispose", output.Output.Dispose);

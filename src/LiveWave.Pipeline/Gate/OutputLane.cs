@@ -37,7 +37,7 @@ internal sealed class OutputLane
     {
         _output = output;
         _room = room;
-        _closing = new OutputClosing(output, room.Settling, Fault);
+        _closing = new OutputClosing(output, room.Settling, () => Volatile.Read(ref _atLastInstant) == 0, Fault);
         _isQuiet = () => Volatile.Read(ref _atLastInstant) == 0 || _closing.IsClosed;
     }
 
@@ -50,6 +50,9 @@ internal sealed class OutputLane
     internal bool IsFaulty => Volatile.Read(ref _isFaulty) != 0;
 
     internal SlotState SlotState => _slot.State;
+
+    /// <summary>The sender is not at a last instant, or the output was closed from outside.</summary>
+    internal bool IsQuiet => _isQuiet();
 
     internal double DueSeconds => _slot.DueSeconds;
 

@@ -285,6 +285,7 @@ public sealed class PulseGate : IDisposable
         {
             var state = lane.SlotState;
             if (state is SlotState.Sending or SlotState.Ending || (state == SlotState.Pending && lane.DueSeconds <= now)) return false;
+            if (!lane.IsQuiet) return false;   // its patience would be measured on a clock that jumps
         }
 
         return true;

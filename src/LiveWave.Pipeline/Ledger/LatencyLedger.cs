@@ -2,7 +2,7 @@ using LiveWave.Abstractions;
 
 namespace LiveWave.Pipeline;
 
-/// <summary>The latency budget of a run: how long each stage took, for every block and every decision.</summary>
+/// <summary>The latency budget of a run: how long each stage took, for every block, decision and outcome.</summary>
 /// <remarks>One writer, the decision thread; read after the run. Computing times are real also where the clock is virtual.</remarks>
 public sealed class LatencyLedger
 {
@@ -57,15 +57,18 @@ public sealed class LatencyLedger
     /// <param name="seconds">Computing time.</param>
     public void Block(double seconds) => _block.Record(seconds);
 
-    /// <summary>A decision was taken and its outcome is known.</summary>
-    /// <param name="stages">When it passed each stage.</param>
-    public void Outcome(in StageStamps stages)
+    /// <summary>A decision was taken.</summary>
+    /// <param name="stages">When it passed each stage so far, and when it is due.</param>
+    public void Decision(in StageStamps stages)
     {
         _acquired.Record(stages.ReceivedSeconds - stages.AcquiredSeconds);
         _phased.Record(stages.PhasedSeconds - stages.ReceivedSeconds);
         _read.Record(stages.ReadSeconds - stages.PhasedSeconds);
         _decided.Record(stages.DecidedSeconds - stages.ReadSeconds);
         _lead.Record(stages.DueSeconds - stages.DecidedSeconds);
-        _late.Record(stages.SentSeconds - stages.DueSeconds);
     }
+
+    /// <summary>An outcome is known: one a decision and output.</summary>
+    /// <param name="stages">When it passed each stage.</param>
+    public void Outcome(in StageStamps stages) => _late.Record(stages.SentSeconds - stages.DueSeconds);
 }

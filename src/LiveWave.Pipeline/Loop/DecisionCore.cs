@@ -38,7 +38,7 @@ public sealed class DecisionCore
         _rules = [.. setup.Rules.Select(rule => new RuleJudge(rule, rateHz, setup.Seed, setup.SessionId))];
         _missing = new double[setup.Format.ChannelCount];
         _missing.AsSpan().Fill(double.NaN);
-        _longestBridgeRows = (long)rateHz;
+        _longestBridgeRows = (long)(LongestBridgeSeconds * rateHz);
     }
 
     /// <summary>A gap longer than this is not bridged row by row: every stage starts from rest.</summary>

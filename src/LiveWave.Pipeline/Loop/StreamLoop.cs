@@ -95,21 +95,13 @@ public sealed class StreamLoop
         var allocated = GC.GetAllocatedBytesForCurrentThread();
         _block.StampReceived(_parts.Clock.NowSeconds);
         _repair.Apply(_block, _rows);
-        for (var i = 0; i < _rows.Count && End == RunEnd.None; i++)
-        {
-            if (_rows[i].Received >= _parts.RowLimit)
-            {
-                Finish(RunEnd.RowLimit);
-                break;
-            }
-
-            JudgeRow(_rows[i], _block.Row(i));
-        }
-
+        var judged = 0;
+        for (; judged < _rows.Count && _rows[judged].Received < _parts.RowLimit; judged++) JudgeRow(_rows[judged], _block.Row(judged));
         _parts.Ledger.Block(_parts.Stopwatch.NowSeconds - _turnStarted);
         _parts.Ledger.DecisionThreadBytes += GC.GetAllocatedBytesForCurrentThread() - allocated;
-        PublishJudged();
-        _parts.Surface.Blocks.Tell(_block);
+        _parts.Surface.Blocks.Tell(_block);   // before what was read from it: a table counts onsets from the first block's first stamp
+        if (judged < _rows.Count) Finish(RunEnd.RowLimit);
+        else PublishJudged();
         if (_parts.Checks) _block.Poison();
     }
 
@@ -117,7 +109,13 @@ public sealed class StreamLoop
     {
         Rows++;
         NewestStampSeconds = now.StampSeconds;
-        if (!_core.StepPhase(now, row)) return;
+        if (!_core.StepPhase(now, row))
+        {
+            // Where a conditioner swallowed the row of a restart, holds of what it ended are there already.
+            if (_core.Decisions.Count > _committed) CommitNew(now.StampSeconds);
+            return;
+        }
+
         var phased = Elapsed();
         _core.Read(now);
         var read = Elapsed();
@@ -134,6 +132,7 @@ public sealed class StreamLoop
             var decision = _core.Decisions[_committed];
             var stages = new StageStamps(
                 stamp, received, received + phased, received + read, received + decided, decision.DueSeconds, double.NaN, double.NaN);
+            _parts.Ledger.Decision(stages);
             var outputs = OutputsOf(decision);
             if (decision.Kind == DecisionKind.Hold || outputs.Count == 0)
             {
@@ -182,7 +181,12 @@ public sealed class StreamLoop
 
     private void DrainStatus()
     {
-        while (_parts.Board.TryTake(out var status)) _parts.Surface.Status.Tell(status);
+        while (_parts.Board.TryTake(out var status))
+        {
+            if (status.Level == StatusLevel.Fault) _parts.Gate.DisarmWithoutWaiting($"{status.Where}: {status.What}");
+            _parts.Surface.Status.Tell(status);
+        }
+
         while (_parts.Gate.TryTakeNotice(out var notice)) _parts.Surface.Status.Tell(notice);
     }
 

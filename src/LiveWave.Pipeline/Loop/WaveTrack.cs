@@ -39,8 +39,8 @@ public sealed class WaveTrack
     /// <summary>The newest reading.</summary>
     public ref readonly Reading Latest => ref _latest;
 
-    /// <summary>An event passes.</summary>
-    public bool IsPassing => _machine.State == WaveEventState.Passing;
+    /// <summary>An event passes, and nothing failed: what a part said before it failed decides no more.</summary>
+    public bool IsPassing => !HasFailed && _machine.State == WaveEventState.Passing;
 
     /// <summary>The event that passes, as it stands at the newest frame: direction over the last frames, and the standard error
     /// and evidence of the newest frame that held it.</summary>

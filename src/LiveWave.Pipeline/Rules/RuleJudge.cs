@@ -9,6 +9,7 @@ namespace LiveWave.Pipeline;
 /// order, then the largest evidence, then the earliest. What happens to a pulse never comes back here. Allocates nothing.</remarks>
 public sealed class RuleJudge
 {
+    private const double Slack = 1e-9;   // of a row: spans that are whole rows stay so
     private readonly RuleSetup _rule;
     private readonly ulong _seed;
     private readonly string _sessionId;
@@ -30,8 +31,8 @@ public sealed class RuleJudge
         _rule = rule;
         _seed = seed;
         _sessionId = sessionId;
-        _restRows = (long)Math.Ceiling(rule.RestMs * rateHz / 1000);
-        LeadRows = (long)Math.Ceiling(rule.LeadMs * rateHz / 1000);
+        _restRows = (long)Math.Ceiling((rule.RestMs * rateHz / 1000) - Slack);
+        LeadRows = (long)Math.Ceiling((rule.LeadMs * rateHz / 1000) - Slack);
     }
 
     /// <summary>The rule.</summary>

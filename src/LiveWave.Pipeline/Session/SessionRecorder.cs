@@ -26,6 +26,7 @@ public sealed class SessionRecorder : IDisposable
     private double _firstStamp = double.NaN;
     private int _lastBlockRows = -1;
     private bool _hasFailed;
+    private bool _isDisposed;
 
     /// <summary>Creates the files, listens and starts the thread.</summary>
     /// <param name="folder">Where.</param>
@@ -51,15 +52,25 @@ public sealed class SessionRecorder : IDisposable
     /// <summary>Values that found no place: the tables have so many holes.</summary>
     public long Lost => _events.Refused + _decisions.Refused + _outcomes.Refused + _notes.Refused + _statuses.Refused;
 
-    /// <summary>Writes what is left and closes the files.</summary>
+    /// <summary>Writes what is left and closes the files. What could not be written is posted to the board.</summary>
     public void Dispose()
     {
+        if (_isDisposed) return;
+        _isDisposed = true;
         _subscriptions.Dispose();
         _stop.Cancel();
         _ = _wake.Set();
         _thread.Join();
-        _tables.Dispose();
-        _log.Dispose();
+        try
+        {
+            _tables.Dispose();
+            _log.Dispose();
+        }
+        catch (Exception error) when (error is IOException or UnauthorizedAccessException)
+        {
+            if (!_hasFailed) Fail(error);
+        }
+
         _wake.Dispose();
         _stop.Dispose();
     }
@@ -112,8 +123,13 @@ public sealed class SessionRecorder : IDisposable
         }
         catch (Exception error) when (error is IOException or UnauthorizedAccessException)
         {
-            _hasFailed = true;
-            _board.Post(StatusLevel.Fault, "recorder", $"the session folder can't be written: {error.Message}", "free the disk");
+            Fail(error);
         }
+    }
+
+    private void Fail(Exception error)
+    {
+        _hasFailed = true;
+        _board.Post(StatusLevel.Fault, "recorder", $"the session folder can't be written: {error.Message}", "free the disk");
     }
 }

@@ -72,6 +72,36 @@ public sealed class GateEndTests
     }
 
     [Fact]
+    public void The_end_lets_a_send_under_way_finish_before_it_brings_the_output_to_rest()
+    {
+        using var entered = new ManualResetEventSlim();
+        using var goOn = new ManualResetEventSlim();
+        var quieted = -1;
+        var bench = new GateBench(patienceMs: 60_000);
+        bench.A.OnSend = _ =>
+        {
+            entered.Set();
+            goOn.Wait(Stop);
+            quieted = bench.A.QuietCount;
+        };
+        bench.Gate.Open();
+        bench.Gate.Arm();
+        _ = bench.Commit(100.1);
+        bench.Clock.MoveTo(100.1);
+        entered.Wait(Stop);
+
+        var ending = new Thread(bench.Dispose);
+        ending.Start();
+        bench.B.Disposed.Wait(Stop);   // the other output is closed by now
+        goOn.Set();
+        ending.Join();
+
+        Assert.Equal(0, quieted);
+        Assert.Equal((1, 1, 1), (bench.A.SentCount, bench.A.QuietCount, bench.A.DisposeCount));
+        Assert.Equal(OutcomeKind.Sent, bench.Take().Kind);
+    }
+
+    [Fact]
     public void An_output_that_will_not_come_to_rest_is_disposed_all_the_same_and_told()
     {
         var bench = new GateBench(patienceMs: 5).Armed();

@@ -50,12 +50,16 @@ internal sealed class Rig
 
     public IReadOnlyList<Status> Statuses => _statuses;
 
+    /// <summary>Readings and events that were told before the first block; −1: no block was told.</summary>
+    public int ToldBeforeFirstBlock { get; private set; } = -1;
+
     /// <summary>Judges a feed to its end, as fast as possible, with the loop's own checks switched on.</summary>
-    public static Rig Play(RunSetup setup, IFeed feed, int blockRows, Action<int, PulseGate>? meanwhile = null, IOutput? output = null, long rowLimit = long.MaxValue)
+    public static Rig Play(RunSetup setup, IFeed feed, int blockRows, Action<int, PulseGate>? meanwhile = null, IOutput? output = null, long rowLimit = long.MaxValue, Status? posted = null)
     {
         var rig = new Rig();
         var clock = new VirtualClock();
         var board = new StatusBoard(clock);
+        if (posted is { } status) board.Post(status.Level, status.Where, status.What, status.Advice);
         var surface = new RunSurface(board);
         using var gate = new PulseGate([new GateOutput("stimulator", output ?? new NoOutput()) { IsDummy = output is not null }], clock);
         gate.Open();
@@ -147,6 +151,7 @@ internal sealed class Rig
     };
 
     private System.Reactive.Disposables.CompositeDisposable Listen(RunSurface surface) => new(
+        surface.Blocks.Subscribe(_ => ToldBeforeFirstBlock = ToldBeforeFirstBlock < 0 ? _readings.Count + _events.Count : ToldBeforeFirstBlock),
         surface.Decisions.Subscribe(_decisions.Add),
         surface.Events.Subscribe(_events.Add),
         surface.Verdicts.Subscribe(_verdicts.Add),

@@ -1,4 +1,5 @@
 using LiveWave.Abstractions;
+using LiveWave.Dsp;
 using LiveWave.Testing;
 
 namespace LiveWave.Pipeline.Tests;
@@ -123,6 +124,67 @@ public sealed class StreamLoopTests
         Assert.True(inLarge.Readings.Max(reading => reading.At.Received) <= 2500);
     }
 
+    [Theory]
+    [InlineData(long.MaxValue)]
+    [InlineData(2501)]
+    public void A_block_is_told_before_what_was_read_from_it(long rowLimit)
+    {
+        var setup = Rig.Setup();
+
+        var rig = Rig.Play(setup, new FakeFeed(setup.Format, Rig.Rows(setup, seconds: 8)), blockRows: 4000, rowLimit: rowLimit);
+
+        Assert.NotEmpty(rig.Events);
+        Assert.Equal(0, rig.ToldBeforeFirstBlock);
+    }
+
+    [Fact]
+    public void A_hold_that_a_restart_ends_has_its_verdict_though_the_row_of_the_restart_was_swallowed()
+    {
+        var setup = Rig.Setup() with { Conditioners = [() => new EveryOther()] };
+        var rows = Rig.Rows(setup, seconds: 8);
+        var hold = Rig.Play(setup, new FakeFeed(setup.Format, rows), blockRows: 20).Decisions.First(decision => decision.Kind == DecisionKind.Hold);
+        var feed = new FakeFeed(setup.Format, rows).RestartBefore((int)hold.At.Received + 1);
+
+        var rig = Rig.Play(setup, feed, blockRows: 1);
+
+        Assert.Contains(rig.Decisions, decision => decision.EventNumber == hold.EventNumber && decision.Kind == DecisionKind.Hold);
+        Assert.Equal(rig.Decisions.Select(decision => decision.Number).Order(), rig.Verdicts.Select(verdict => verdict.Decision.Number).Order());
+    }
+
+    [Fact]
+    public void A_wave_estimator_that_fails_decides_no_more_in_the_very_row()
+    {
+        var setup = Rig.Setup();
+        var rows = Rig.Rows(setup, seconds: 12);
+        var acts = Rig.Play(setup, new FakeFeed(setup.Format, rows), blockRows: 20).Decisions.Where(decision => decision.Kind != DecisionKind.Hold).ToList();
+        var fails = acts[1].At.Index + 10;   // a frame in which the second event still passes, and in which the rest after the first is over
+        var track = setup.Tracks[0];
+        var broken = setup with
+        {
+            Tracks = [track with { Waves = [track.Waves[0] with { MakeWave = () => new FailingWave(fails) }] }],
+            Rules = [setup.Rules[0] with { RestMs = (fails - acts[0].At.Index) * 2 }],
+        };
+
+        var rig = Rig.Play(broken, new FakeFeed(setup.Format, rows), blockRows: 20);
+
+        Assert.Contains(rig.Statuses, status => status.What.Contains("out of order", StringComparison.Ordinal));
+        Assert.Equal([acts[0].At], rig.Decisions.Where(decision => decision.Kind != DecisionKind.Hold).Select(decision => decision.At));
+        Assert.Contains(rig.Decisions, decision => decision.EventNumber == acts[1].EventNumber && decision.Failed == Condition.Rest);
+    }
+
+    [Fact]
+    public void A_fault_that_anyone_posts_disarms_the_run()
+    {
+        var setup = Rig.Setup();
+        var fault = new Status(StatusLevel.Fault, "recorder", "a table has a hole", "", 0);
+
+        var rig = Rig.Play(setup, new FakeFeed(setup.Format, Rig.Rows(setup, seconds: 8)), blockRows: 20, posted: fault);
+
+        var acted = rig.Verdicts.Where(verdict => verdict.Decision.Kind != DecisionKind.Hold).ToList();
+        Assert.NotEmpty(acted);
+        Assert.All(acted, verdict => Assert.Equal(OutcomeKind.NotArmed, verdict.Outcome.Kind));
+    }
+
     private static void Step(DecisionCore core, double[][] rows, int i)
     {
         var now = new RowInstant(i, i, i / 500.0);
@@ -153,6 +215,22 @@ public sealed class StreamLoopTests
         }
 
         public void Reset() => _rows = 0;
+    }
+
+    private sealed class FailingWave(long index) : IWaveEstimator
+    {
+        private readonly PlanarEstimator _planar = new();
+
+        public int Prepare(StreamFormat format, Band band, Layout layout, Calibration calibration) =>
+            _planar.Prepare(format, band, layout, calibration);
+
+        public void Read(Phasors now, ref Reading reading)
+        {
+            if (now.At.Index >= index) throw new InvalidOperationException("out of order");
+            _planar.Read(now, ref reading);
+        }
+
+        public void Reset() => _planar.Reset();
     }
 
     private sealed class EveryOther : IConditioner
