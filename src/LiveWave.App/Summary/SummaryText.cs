@@ -55,7 +55,7 @@ internal static class SummaryText
         yield return Row(
             "warm-up",
             $"{run.Warmup.Pulses} pulses, {run.Warmup.Shams} shams, {run.Warmup.Holds} holds in {Number(run.Warmup.Seconds, 1)} s; "
-            + $"self-test 99 % {Ms(run.Warmup.LateBlockP99Ms)} a block");
+            + $"self-test 99 % {Ms(run.Warmup.LateBlockP99Ms)} a block of {run.Warmup.BlockRows} rows (n = {run.Warmup.Blocks})");
     }
 
     private static IEnumerable<string> Truth(TruthComparison truth)

@@ -45,6 +45,10 @@ internal sealed class CommonOptions
     {
         _clock.AcceptOnlyFromAmong("real", "fast");
         _view.AcceptOnlyFromAmong("none");
+        SessionId.Validators.Add(result =>
+        {
+            if (result.Tokens.Count > 0 && !IsPlain(result.Tokens[0].Value)) result.AddError("--session-id takes letters, digits, '-', '_' and '.'");
+        });
         _seconds.Validators.Add(result =>
         {
             // What is no number at all is the parser's to say.
@@ -61,6 +65,9 @@ internal sealed class CommonOptions
             }
         });
     }
+
+    /// <summary>The id names a folder and keys lots.</summary>
+    private static bool IsPlain(string id) => id.Length is > 0 and <= 100 && id[0] != '.' && id.All(c => char.IsAsciiLetterOrDigit(c) || c is '-' or '_' or '.');
 
     public Option<string?> SessionId { get; } = new("--session-id")
     {

@@ -28,7 +28,8 @@ internal static class WatchVerb
         File.WriteAllText(folder.At("summary.txt"), text);
         File.WriteAllText(folder.At("summary.json"), SummaryJson.Of(summary) + "\n");
         Console.Out.Write(options.Json ? SummaryJson.Of(summary) + "\n" : text);
-        return summary.End == RunEnd.Fault ? ExitCode.Failed : ExitCode.Done;
+        var hasFailed = summary.End is RunEnd.Fault or RunEnd.Lost || summary.Tally.Statuses.Any(status => status.Level == StatusLevel.Fault);
+        return hasFailed ? ExitCode.Failed : ExitCode.Done;
     }
 
     private static RunSummary Play(WatchWiring wiring, SessionFolder folder, WatchOptions options, string recording, DateTimeOffset began)

@@ -49,7 +49,7 @@ internal sealed class WatchWiring : IDisposable
     public string NumericsPrint { get; } = Dsp.NumericsPrint.Compute();
 
     /// <summary>What is worth knowing before the first block.</summary>
-    public IReadOnlyList<Status> Notes => Calibrations.Notes;
+    public IReadOnlyList<Status> Notes => [.. Calibrations.Notes, .. WarmupNotes()];
 
     /// <summary>Makes everything; opens no output.</summary>
     public static WatchWiring Make(SessionSheet sheet, RecordingFeed recording, double firstStampSeconds, WatchOptions options)
@@ -113,7 +113,12 @@ internal sealed class WatchWiring : IDisposable
             Recording = Path.GetFileName(recording),
         }.Write(folder);
         File.Copy(_sheet.File, folder.At("sheet.toml"));
-        foreach (var path in Calibrations.Files) File.Copy(path, folder.At(Path.GetFileName(path)), overwrite: false);
+        var number = 0;
+        foreach (var path in Calibrations.Files)
+        {
+            var copy = folder.At(Path.GetFileName(path));
+            File.Copy(path, File.Exists(copy) ? folder.At($"{++number}-{Path.GetFileName(path)}") : copy);
+        }
     }
 
     /// <summary>What the recording had wrong with it, known only once it was read.</summary>
@@ -152,6 +157,27 @@ internal sealed class WatchWiring : IDisposable
     }
 
     public void Dispose() => EndGate();
+
+    private IEnumerable<Status> WarmupNotes()
+    {
+        if (Warmup.Trouble.Length > 0) yield return Warn($"it failed: {Warmup.Trouble}", "mend or leave out this part");
+        var fewest = Math.Min(Warmup.Pulses, Math.Min(Warmup.Shams, Warmup.Holds));
+        if (Setup.Rules.Count > 0 && fewest < Pipeline.Warmup.Enough)
+        {
+            yield return Warn(
+                $"it took {Warmup.Pulses} pulses, {Warmup.Shams} shams, {Warmup.Holds} holds; {Pipeline.Warmup.Enough} of each make sure that the "
+                + "first pulse is as quick as later ones",
+                "free the machine, or mind the first pulses");
+        }
+
+        var limitMs = _sheet.Budget.InAllMs;
+        if (Warmup.LateBlockP99Ms > limitMs)
+        {
+            yield return Warn($"99 % of its blocks took {Cell.Number(Warmup.LateBlockP99Ms, 3)} ms, the budget is {limitMs} ms", "free the machine");
+        }
+    }
+
+    private static Status Warn(string what, string advice) => new(StatusLevel.Warning, "warm-up", what, advice, double.NaN);
 
     private static string ClockWord(WatchOptions options) => options.IsRealClock ? "real" : "fast";
 

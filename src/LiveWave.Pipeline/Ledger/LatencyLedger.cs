@@ -11,7 +11,7 @@ public sealed class LatencyLedger
     private readonly StageHistogram _read;
     private readonly StageHistogram _decided;
     private readonly StageHistogram _lead = new("decided to due");
-    private readonly StageHistogram _late = new("due to sent");
+    private readonly StageHistogram _late = new("due to sent, late ones left out");
     private readonly StageHistogram _block;
 
     /// <summary>Makes an empty ledger.</summary>
@@ -19,7 +19,7 @@ public sealed class LatencyLedger
     public LatencyLedger(BudgetLimits limits)
     {
         ArgumentNullException.ThrowIfNull(limits);
-        _phased = new StageHistogram("received to phased", limits.PhasedMs);
+        _phased = new StageHistogram("received to phased, earlier rows of its block included", limits.PhasedMs);
         _read = new StageHistogram("phased to read", limits.ReadMs);
         _decided = new StageHistogram("read to decided", limits.DecidedMs);
         _block = new StageHistogram("received to judged, every block", limits.InAllMs);

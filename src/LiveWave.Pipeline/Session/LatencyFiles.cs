@@ -26,7 +26,7 @@ public static class LatencyFiles
                 Cell.Number(stage.PercentileMs(99.9), 4),
                 Cell.Number(stage.MaxMs, 4),
                 Cell.Number(stage.LimitMs, 4),
-                Cell.Whole(stage.OverLimit));
+                double.IsNaN(stage.LimitMs) ? "n/a" : Cell.Whole(stage.OverLimit));
         }
 
         using var file = new FileStream(folder.At("latency.hlog"), FileMode.CreateNew, FileAccess.Write);

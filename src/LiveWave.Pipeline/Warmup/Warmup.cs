@@ -1,3 +1,4 @@
+using System.Reactive.Linq;
 using LiveWave.Abstractions;
 
 namespace LiveWave.Pipeline;
@@ -29,23 +30,31 @@ public static class Warmup
         };
         var started = stopwatch.NowSeconds;
         var taken = new int[3];
-        _ = Play(clone, stopwatch, taken, seconds => seconds > CompileSeconds);
-        var blocks = Play(clone, stopwatch, taken, seconds => seconds > TestSeconds && (IsEnough(taken, clone) || seconds > MostSeconds));
+        var trouble = new List<string>();
+        _ = Play(clone, stopwatch, taken, trouble, seconds => seconds > CompileSeconds);
+        var blocks = Play(clone, stopwatch, taken, trouble, seconds => seconds > TestSeconds && (IsEnough(taken, clone) || seconds > MostSeconds));
         return new WarmupReport(
             taken[(int)DecisionKind.Pulse],
             taken[(int)DecisionKind.Sham],
             taken[(int)DecisionKind.Hold],
             stopwatch.NowSeconds - started,
-            blocks.PercentileMs(99));
+            blocks.PercentileMs(99),
+            BlockRows,
+            blocks.Count,
+            trouble.FirstOrDefault() ?? "");
     }
 
-    private static StageHistogram Play(RunSetup clone, IClock stopwatch, int[] taken, Func<double, bool> isOver)
+    private static StageHistogram Play(
+        RunSetup clone, IClock stopwatch, int[] taken, List<string> trouble, Func<double, bool> isOver)
     {
         var started = stopwatch.NowSeconds;
         var clock = new VirtualClock();
         var board = new StatusBoard(clock);
         var surface = new RunSurface(board);
         using var counting = surface.Verdicts.Subscribe(verdict => taken[(int)verdict.Decision.Kind]++);
+        using var listening = surface.Status
+            .Where(status => status.Level == StatusLevel.Fault)
+            .Subscribe(status => trouble.Add($"{status.Where}: {status.What}"));
         using var gate = new PulseGate([new GateOutput("warm-up", new NoOutput())], clock);
         gate.Open();
         using var feed = new SteppedFeed(new WarmupFeed(clone), clock, gate);

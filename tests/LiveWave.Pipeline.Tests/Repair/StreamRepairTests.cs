@@ -61,6 +61,49 @@ public sealed class StreamRepairTests
         Assert.Equal(RowBreaks.Restart, rows[2].Breaks);
     }
 
+    [Fact]
+    public void Stamps_that_tremble_at_every_packet_cost_one_false_gap_and_no_more()
+    {
+        var tremble = new[] { 0.006, 0.004, 0.002, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0 };
+        var stamps = Enumerable.Range(0, 20_000).Select(i => 10 + (0.001 * i) + (i < 20 ? 0 : tremble[i % 20])).ToArray();
+        var repair = new StreamRepair(Format);
+
+        var rows = Repair(stamps, blockRows: 20, repair);
+
+        Assert.InRange(repair.Gaps, 0, 1);
+        Assert.InRange(rows[^1].Index - 19_999, 0, 6);
+    }
+
+    [Fact]
+    public void A_rate_that_is_a_little_off_makes_no_gap()
+    {
+        var repair = new StreamRepair(Format);
+
+        _ = Repair([.. Enumerable.Range(0, 200_000).Select(i => 10 + (0.0010001 * i))], blockRows: 100, repair);
+
+        Assert.Equal(0, repair.Gaps);
+    }
+
+    [Theory]
+    [InlineData(1e300)]
+    [InlineData(8000.0)]
+    public void A_stamp_that_jumps_beyond_all_counting_is_a_restart(double stamp)
+    {
+        var rows = Repair([10.000, 10.001, stamp], blockRows: 10);
+
+        Assert.Equal(RowBreaks.Restart, rows[2].Breaks);
+        Assert.Equal(2, rows[2].Index);
+    }
+
+    [Fact]
+    public void A_stamp_that_is_no_number_is_the_one_after_the_last()
+    {
+        var rows = Repair([10.000, 10.001, double.NaN, 10.003], blockRows: 10);
+
+        Assert.Equal([0L, 1, 2, 3], rows.Select(row => row.Index));
+        Assert.Equal(10.002, rows[2].StampSeconds, 9);
+    }
+
     [Property(Replay = "2026,1201", MaxTest = 200)]
     public bool Rows_are_placed_alike_whatever_the_block_size(byte[] steps, byte blockRows)
     {

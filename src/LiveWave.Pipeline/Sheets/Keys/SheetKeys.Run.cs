@@ -65,7 +65,7 @@ public static partial class SheetKeys
     private static SheetKey[] RecordKeys() =>
     [
         Table("record", "What is recorded"),
-        Text("record.folder", "The folder that session folders are made in, relative to the sheet", usual: "sessions"),
+        Text("record.folder", "The folder that session folders are made in, relative to where the program is called", usual: "sessions"),
         NotYet("record.keep", SheetKeyType.Texts, "What to keep of raw samples, readings, events"),
     ];
 }
