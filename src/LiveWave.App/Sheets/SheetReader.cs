@@ -53,6 +53,7 @@ internal static class SheetReader
 
     private static string TextOf(string path)
     {
+        if (Directory.Exists(path)) throw new RefusedException("it is a folder", path, "give the .toml file that describes the run");
         try
         {
             using var file = File.OpenRead(path);

@@ -10,7 +10,8 @@ internal static class TomlTables
 {
     /// <summary>Parses a text.</summary>
     /// <param name="text">TOML.</param>
-    /// <param name="faults">Breaches of TOML, the first of each line; empty where there are none.</param>
+    /// <param name="faults">The first breach of TOML, since what follows one says little; or else keys written twice. Empty where there
+    /// are none.</param>
     /// <returns>The tables; to be used only where there are no faults.</returns>
     public static ParsedTable Parse(string text, out IReadOnlyList<SheetFault> faults)
     {
@@ -24,7 +25,7 @@ internal static class TomlTables
         try
         {
             var document = SyntaxParser.Parse(text, sourceName: null, validate: true);
-            faults = [.. document.Diagnostics.Where(IsError).Select(FaultOf).DistinctBy(fault => fault.Line).OrderBy(fault => fault.Line)];
+            faults = [.. document.Diagnostics.Where(IsError).Select(FaultOf).OrderBy(fault => fault.Line).Take(1)];
             return document;
         }
         catch (TomlException e)

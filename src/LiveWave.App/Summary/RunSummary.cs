@@ -43,6 +43,9 @@ internal sealed record RunSummary
     /// <summary>How often events come by chance, as it was calibrated.</summary>
     public required IReadOnlyList<ChanceRate> Chance { get; init; }
 
+    /// <summary>What each patch uses.</summary>
+    public required IReadOnlyList<string> Arrays { get; init; }
+
     /// <summary>Null where no truth lies beside the recording.</summary>
     public TruthComparison? Truth { get; init; }
 

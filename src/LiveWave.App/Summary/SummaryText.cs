@@ -15,8 +15,9 @@ internal static class SummaryText
         yield return "";
         yield return Row("stream", $"{run.Stream}, {run.Channels} channels, {Number(run.RateHz, 0)} Hz, {Number(run.Seconds, 1)} s");
         yield return Row("", $"{run.LostRows} rows lost in {run.Gaps} gaps; {run.BlankedRows} rows blanked after own pulses and shams");
+        foreach (var array in run.Arrays) yield return Row("", array);
         yield return Row("frames", $"{tally.Frames} read, {Share(tally.ValidFrames, tally.Frames)} with enough channels observed");
-        yield return Row("waves", Counted(tally.Kinds().Select(pair => (WaveKinds.Word(pair.Kind), pair.Count)), tally.Waves.Count, "events"));
+        foreach (var line in Waves(tally)) yield return line;
         foreach (var chance in run.Chance) yield return Row("", Chance(chance));
         foreach (var line in Decisions(tally)) yield return line;
         yield return Row("outcomes", Outcomes(tally));
@@ -47,24 +48,27 @@ internal static class SummaryText
             "punctuality",
             late.Count == 0
                 ? "no pulse or sham reached its instant"
-                : $"due → would have been sent: median {Ms(late.PercentileMs(50))}, largest {Ms(late.MaxMs)} (n = {late.Count}, {run.Clock} clock)");
+                : $"due → would have been sent: median {Ms(late.PercentileMs(50))}, largest {Ms(late.MaxMs)} (n = {late.Count}; "
+                    + $"{run.Tally.CountOf(OutcomeKind.Late)} too late to be sent are left out)" + (run.Clock == "fast" ? "; a fast clock waits, so it is 0" : ""));
         yield return Row(
             "process",
             $"{ledger.Collections} garbage collections, {Number(ledger.PauseMs, 1)} ms stopped; "
             + $"the decision thread allocated {ledger.DecisionThreadBytes} bytes while judging");
         yield return Row(
             "warm-up",
-            $"{run.Warmup.Pulses} pulses, {run.Warmup.Shams} shams, {run.Warmup.Holds} holds in {Number(run.Warmup.Seconds, 1)} s; "
+            $"on synthetic waves: {run.Warmup.Pulses} pulses, {run.Warmup.Shams} shams, {run.Warmup.Holds} holds in {Number(run.Warmup.Seconds, 1)} s; "
             + $"self-test 99 % {Ms(run.Warmup.LateBlockP99Ms)} a block of {run.Warmup.BlockRows} rows (n = {run.Warmup.Blocks})");
     }
 
     private static IEnumerable<string> Truth(TruthComparison truth)
     {
         yield return Row("truth", $"strong planar waves found: {truth.StrongFound} of {truth.Strong}; weaker or longer ones: {truth.WeakFound} of {truth.Weak}");
-        yield return Row(
-            "",
-            $"direction off by a median of {Number(truth.MedianDirectionErrorDegrees, 1)}° and {Number(truth.MedianDelayMs, 0)} ms after onset, when "
-            + $"the strong ones began to pass (n = {truth.StrongFound})");
+        if (truth.StrongFound > 0)
+        {
+            yield return Row("", $"direction of the strong ones: off by a median of {Number(truth.MedianDirectionErrorDegrees, 1)}° (n = {truth.StrongFound})");
+            yield return Row("", $"they began to pass a median of {Number(truth.MedianDelayMs, 0)} ms after their onset (n = {truth.StrongFound})");
+        }
+
         yield return Row("", $"decoys (in phase, synchronous) taken for waves: {truth.DecoysTaken} of {truth.Decoys}; waves where nothing was: {truth.Stray}");
         yield return Row("", "one short recording shows how it works; it proves no rate");
     }
@@ -82,6 +86,18 @@ internal static class SummaryText
         }
 
         yield return Row("caution", "for research, not a medical device; stimulation needs licensed practice and your local rules");
+    }
+
+    private static IEnumerable<string> Waves(RunTally tally)
+    {
+        var tracks = tally.Waves.GroupBy(wave => (wave.Patch, wave.Band)).ToList();
+        if (tracks.Count == 0) yield return Row("waves", "none");
+        foreach (var track in tracks)
+        {
+            var kinds = track.GroupBy(wave => wave.Kind).OrderBy(kind => kind.Key).Select(kind => (WaveKinds.Word(kind.Key), kind.Count()));
+            yield return Row(
+                track == tracks[0] ? "waves" : "", $"patch '{track.Key.Patch}', band '{track.Key.Band}': {Counted(kinds, track.Count(), "events")}");
+        }
     }
 
     private static IEnumerable<string> Decisions(RunTally tally)
@@ -118,7 +134,9 @@ internal static class SummaryText
     {
         var kinds = Enum.GetValues<OutcomeKind>().Where(kind => kind != OutcomeKind.NothingDue);
         var counted = kinds.Select(kind => (DecisionWords.Outcome(kind), tally.CountOf(kind))).Where(pair => pair.Item2 > 0).ToList();
-        return Counted(counted, counted.Sum(pair => pair.Item2), "pulses and shams, each counted once per output");
+        var idle = tally.CountOf(OutcomeKind.NothingDue) - tally.CountOf(DecisionKind.Hold);
+        return Counted(counted, counted.Sum(pair => pair.Item2), "pulses and shams, each counted once per output")
+            + (idle > 0 ? $"; {idle} of rules without an output" : "");
     }
 
     private static string Counted(IEnumerable<(string Word, int Count)> counts, int n, string what) =>

@@ -9,10 +9,18 @@ namespace LiveWave.App;
 internal sealed class TruthComparison
 {
     private readonly double _firstStamp;
+    private readonly double _rotationDegrees;
 
-    public TruthComparison(IReadOnlyList<TruthRow> truth, IReadOnlyList<WaveEvent> events, double firstStamp, double lastStamp)
+    /// <param name="truth">What was put in, in the array's own frame.</param>
+    /// <param name="events">Events of one patch in one band.</param>
+    /// <param name="rotationDegrees">How far the layout is turned against the array's own frame.</param>
+    /// <param name="firstStamp">Stamp of the first row.</param>
+    /// <param name="lastStamp">Stamp of the last row judged.</param>
+    public TruthComparison(
+        IReadOnlyList<TruthRow> truth, IReadOnlyList<WaveEvent> events, double rotationDegrees, double firstStamp, double lastStamp)
     {
         _firstStamp = firstStamp;
+        _rotationDegrees = rotationDegrees;
         var seen = truth.Where(row => row.UntilSeconds <= lastStamp - firstStamp).ToList();
         var planar = seen.Where(row => row.Kind == WaveKinds.Word(WaveKind.Planar)).ToList();
         var decoys = seen.Except(planar).ToList();
@@ -54,9 +62,9 @@ internal sealed class TruthComparison
     /// <summary>Median time from a strong wave's true onset until its event began to pass.</summary>
     public double MedianDelayMs { get; }
 
-    private static double Error(WaveEvent wave, TruthRow row)
+    private double Error(WaveEvent wave, TruthRow row)
     {
-        var off = wave.DirectionDegrees - row.DirectionDegrees;
+        var off = wave.DirectionDegrees - _rotationDegrees - row.DirectionDegrees;
         return Math.Abs(off - (360 * Math.Floor((off + 180) / 360)));
     }
 

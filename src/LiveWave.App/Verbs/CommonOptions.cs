@@ -22,14 +22,14 @@ internal sealed class CommonOptions
 
     private readonly Option<int> _blockRows = new("--block-rows")
     {
-        Description = "Rows in a block, as an amplifier would deliver them. Decisions are the same.",
-        DefaultValueFactory = _ => 20,
+        Description = "Rows in a block, as an amplifier would deliver them. Decisions are the same; pulses can be late if blocks last longer than a rule's lead.",
+        DefaultValueFactory = _ => 10,
         HelpName = "N",
     };
 
     private readonly Option<string?> _out = new("--out")
     {
-        Description = "The session folder: absent or empty. A new one in the sheet's record folder, if not given.",
+        Description = "The session folder: absent or empty. A new one in the folder that the sheet's [record] names, if not given.",
         HelpName = "DIR",
     };
 
@@ -45,6 +45,10 @@ internal sealed class CommonOptions
     {
         _clock.AcceptOnlyFromAmong("real", "fast");
         _view.AcceptOnlyFromAmong("none");
+        _out.Validators.Add(result =>
+        {
+            if (result.Tokens.Count > 0 && string.IsNullOrWhiteSpace(result.Tokens[0].Value)) result.AddError("--out needs a folder");
+        });
         SessionId.Validators.Add(result =>
         {
             if (result.Tokens.Count > 0 && !IsPlain(result.Tokens[0].Value)) result.AddError("--session-id takes letters, digits, '-', '_' and '.'");
@@ -71,7 +75,7 @@ internal sealed class CommonOptions
 
     public Option<string?> SessionId { get; } = new("--session-id")
     {
-        Description = "Repeats a session's lots, for a re-run. A new one from name and time, if not given.",
+        Description = "Repeats a session's lots, for a re-run. If not given: 'demo' has a fixed one, 'watch' makes one of name and time.",
         HelpName = "ID",
     };
 

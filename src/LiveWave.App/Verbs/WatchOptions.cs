@@ -17,7 +17,7 @@ internal sealed record WatchOptions
     /// <summary>Paced by the recording's stamps; false: as fast as it can be judged.</summary>
     public bool IsRealClock { get; init; }
 
-    public int BlockRows { get; init; } = 20;
+    public int BlockRows { get; init; } = 10;
 
     /// <summary>The session folder; null: a new one in the sheet's record folder.</summary>
     public string? Out { get; init; }

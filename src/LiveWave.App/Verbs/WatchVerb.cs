@@ -21,7 +21,7 @@ internal static class WatchVerb
         using var wiring = WatchWiring.Make(sheet, feed, FirstStampSeconds(file, sheet), options);
         var time = WallClock.Time;
         var began = time.GetLocalNow();
-        var folder = SessionFolder.Create(options.Out ?? FolderName(sheet, wiring.Setup.SessionId, began));
+        var folder = SessionFolder.Create(options.Out ?? FolderName(sheet, wiring.Setup.SessionId, options.SessionId is not null, began));
         wiring.WriteDocuments(folder, options, recording, began);
         var summary = Play(wiring, folder, options, recording, began);
         var text = SummaryText.Of(summary);
@@ -38,7 +38,7 @@ internal static class WatchVerb
         using var recorder = new SessionRecorder(folder, wiring.Surface, wiring.Board);
         using var thread = new DecisionThread(wiring.Loop, wiring.Gate);
         using var guard = new RunGuard(wiring.Gate, folder, thread.Stop);
-        foreach (var note in wiring.Notes) wiring.Board.Post(note.Level, note.Where, note.What, note.Advice);
+        foreach (var note in wiring.NotesFor(options)) wiring.Board.Post(note.Level, note.Where, note.What, note.Advice);
         var collections = GC.CollectionCount(0);
         var pause = GC.GetTotalPauseDuration();
         wiring.Gate.Open();   // under the guard: from here on every way out brings the outputs to rest
@@ -83,10 +83,9 @@ internal static class WatchVerb
             ? sheet.PathOf(file)
             : throw new RefusedException("no recording to play", $"{sheet.File}, [stream]", "give --from FILE, or 'file' in the sheet");
 
-    private static string FolderName(SessionSheet sheet, string sessionId, DateTimeOffset now)
+    private static string FolderName(SessionSheet sheet, string sessionId, bool isGiven, DateTimeOffset now)
     {
-        var stamp = now.ToString("yyyyMMdd-HHmmss", CultureInfo.InvariantCulture);
-        var name = sessionId.EndsWith(stamp, StringComparison.Ordinal) ? sessionId : $"{sessionId}-{stamp}";
-        return Path.Combine(sheet.Record.Folder, name);
+        if (!isGiven) return Path.Combine(sheet.Record.Folder, sessionId);   // made of name and time already
+        return Path.Combine(sheet.Record.Folder, $"{sessionId}-{now.ToString("yyyyMMdd-HHmmss", CultureInfo.InvariantCulture)}");
     }
 }

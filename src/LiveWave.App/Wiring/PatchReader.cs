@@ -19,6 +19,11 @@ internal static class PatchReader
         var channels = patch.Channels.Count > 0
             ? Named(patch.Channels, format, places, where)
             : All(format, places, electrodes, where);
+        foreach (var name in patch.BadChannels.Where(name => places.Find(name) < 0))
+        {
+            throw new RefusedException($"bad channel '{name}' is none of its electrodes", where, "mend badChannels in " + sheet.File);
+        }
+
         var bad = new LabelMatch(patch.BadChannels);
         return new PatchSetup(
             patch.Name,

@@ -12,6 +12,9 @@ internal sealed class WatchWiring : IDisposable
     // Between the clock's start and the first pull lie outputs to open and files to make: so long before the first row is due.
     private const double HeadStartSeconds = 0.5;
 
+    // What computing and waking a sender take on a busy machine, ms.
+    private const double LeastSpareMs = 3;
+
     private readonly SessionSheet _sheet;
     private readonly RecordingFeed _recording;
 
@@ -49,7 +52,7 @@ internal sealed class WatchWiring : IDisposable
     public string NumericsPrint { get; } = Dsp.NumericsPrint.Compute();
 
     /// <summary>What is worth knowing before the first block.</summary>
-    public IReadOnlyList<Status> Notes => [.. Calibrations.Notes, .. WarmupNotes()];
+    public IReadOnlyList<Status> NotesFor(WatchOptions options) => [.. Calibrations.Notes, .. LeadNotes(options), .. WarmupNotes()];
 
     /// <summary>Makes everything; opens no output.</summary>
     public static WatchWiring Make(SessionSheet sheet, RecordingFeed recording, double firstStampSeconds, WatchOptions options)
@@ -145,6 +148,8 @@ internal sealed class WatchWiring : IDisposable
         WithoutNoiseModel = Calibrations.WithoutNoiseModel,
         Chance = Calibrations.Chance,
         Truth = Compare(tally, recording),
+        Arrays = [.. Setup.Patches.Select(patch =>
+            $"patch '{patch.Name}': {patch.Layout.Electrodes.Count} electrodes, {patch.Layout.GoodChannels().Length} of them used")],
         Folder = folder.FullPath,
         NumericsPrint = NumericsPrint,
     };
@@ -157,6 +162,20 @@ internal sealed class WatchWiring : IDisposable
     }
 
     public void Dispose() => EndGate();
+
+    private IEnumerable<Status> LeadNotes(WatchOptions options)
+    {
+        var blockMs = 1000 * options.BlockRows / Setup.Format.NominalRateHz;
+        foreach (var rule in Setup.Rules.Where(rule => rule.LeadMs < blockMs + LeastSpareMs))
+        {
+            yield return new Status(
+                StatusLevel.Warning,
+                $"rule '{rule.Name}'",
+                $"blocks of {Cell.Number(blockMs, 1)} ms leave too little of its lead of {rule.LeadMs} ms: pulses will be late",
+                "shorten the blocks (--block-rows), or lengthen leadMs",
+                double.NaN);
+        }
+    }
 
     private IEnumerable<Status> WarmupNotes()
     {
@@ -212,6 +231,20 @@ internal sealed class WatchWiring : IDisposable
     {
         var path = TruthTable.PathBeside(recording);
         if (!File.Exists(path) || double.IsNaN(Loop.NewestStampSeconds)) return null;
-        return new TruthComparison(TruthTable.Read(path), tally.Waves, FirstStampSeconds, Loop.NewestStampSeconds);
+        var (patch, band) = Watched();
+        return new TruthComparison(
+            TruthTable.Read(path),
+            [.. tally.Waves.Where(wave => wave.Patch == patch.Name && wave.Band == band)],
+            patch.Layout.RotationDegrees,
+            FirstStampSeconds,
+            Loop.NewestStampSeconds);
+    }
+
+    // The patch and band of the first rule; without rules, the first of the sheet.
+    private (PatchSetup Patch, string Band) Watched()
+    {
+        var number = Setup.Rules.Count > 0 ? Setup.Rules[0].Track : 0;
+        var track = Setup.Tracks.SelectMany(track => track.Waves.Select(_ => track)).ElementAt(number);
+        return (Setup.Patches[track.Patch], track.Band.Name);
     }
 }

@@ -33,7 +33,7 @@ public sealed class OscillatorEstimator : IPhaseEstimator
     {
         var where = $"patch '{calibration.Patch}', band '{band.Name}'";
         var model = calibration.PhaseModel
-            ?? throw new RefusedException("the calibration holds no phase model", where, "learn one with 'baseline', or choose an estimator that needs none");
+            ?? throw new RefusedException("estimator 'oscillator' needs a calibration with a phase model, and there is none", where, "give the patch one, or choose 'bandpass-quadrature', which needs none");
         CheckRate(model.RateHz, format.NominalRateHz, where);
         _scaleSquared = ScaleSquared(calibration, format.ChannelCount, where);
         _horizons = new Horizons(band);

@@ -50,11 +50,11 @@ public sealed class CalibrationFile
         catch (JsonException error)
         {
             var where = error.LineNumber is { } line ? $"{path}, line {line + 1}, byte {error.BytePositionInLine + 1}" : path;
-            throw new RefusedException("this is not sound JSON: " + Reason(error), where, "was the file cut off or edited by hand? run 'livewave baseline' again", error);
+            throw new RefusedException("this is not sound JSON: " + Reason(error), where, "was the file cut off or edited by hand? make the calibration again", error);
         }
         catch (InvalidOperationException error)      // a text that is no Unicode is noticed only when it is taken
         {
-            throw new RefusedException("a text in it is not Unicode", path, "run 'livewave baseline' again", error);
+            throw new RefusedException("a text in it is not Unicode", path, "make the calibration again", error);
         }
     }
 
@@ -81,7 +81,7 @@ public sealed class CalibrationFile
         var differences = entry.Fingerprint.Differences(run);
         if (differences.Count == 0) return entry;
         throw new RefusedException(
-            "the calibration was made for something else: " + string.Join("; ", differences), where, "undo the change, or run 'livewave baseline' again");
+            "the calibration was made for something else: " + string.Join("; ", differences), where, "undo the change, or make the calibration again");
     }
 
     private static CalibrationFile Read(CalibrationNode root, string path)
@@ -95,7 +95,7 @@ public sealed class CalibrationFile
         if (version != Version)
         {
             throw root["version"].Refusal(
-                $"version {version} is not understood, only {Version} is", "use the version of LiveWave that made it, or run 'livewave baseline' again");
+                $"version {version} is not understood, only {Version} is", "use the version of LiveWave that made it, or make the calibration again");
         }
 
         root.Knows("format", "version", "madeBy", "provenance", "entries");
@@ -111,7 +111,7 @@ public sealed class CalibrationFile
             entries.Add(entry);
         }
 
-        if (entries.Count == 0) throw root["entries"].Refusal("the list is empty", "run 'livewave baseline' again");
+        if (entries.Count == 0) throw root["entries"].Refusal("the list is empty", "make the calibration again");
         return new CalibrationFile(path, root.Optional("madeBy")?.Text() ?? "", root.Optional("provenance")?.Raw() ?? "{}", entries);
     }
 
@@ -130,7 +130,7 @@ public sealed class CalibrationFile
         }
         catch (Exception error) when (error is FileNotFoundException or DirectoryNotFoundException)
         {
-            throw new RefusedException("no such calibration", path, "check the path, or make one with 'livewave baseline'", error);
+            throw new RefusedException("no such calibration", path, "check the path, or leave 'calibration' out of the patch", error);
         }
         catch (Exception error) when (error is IOException or UnauthorizedAccessException or ArgumentException)
         {

@@ -56,7 +56,7 @@ internal readonly struct CalibrationNode
     /// <summary>A value that must be there.</summary>
     /// <param name="key">Its key.</param>
     public CalibrationNode this[string key] =>
-        Optional(key) ?? throw Refusal($"key '{key}' is missing", "was the file made by 'livewave baseline'? run it again");
+        Optional(key) ?? throw Refusal($"key '{key}' is missing", "make the calibration again");
 
     /// <summary>A value that may be absent or null.</summary>
     /// <param name="key">Its key.</param>
@@ -141,7 +141,7 @@ internal readonly struct CalibrationNode
     private void Require(JsonValueKind kind, string expected)
     {
         if (_value.ValueKind == kind) return;
-        throw Refusal($"{Kind()} where {expected} is expected", "was the file made by 'livewave baseline'? run it again");
+        throw Refusal($"{Kind()} where {expected} is expected", "make the calibration again");
     }
 
     private string Kind() => _value.ValueKind switch

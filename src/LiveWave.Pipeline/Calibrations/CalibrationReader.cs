@@ -42,8 +42,8 @@ internal static class CalibrationReader
         var rateHz = node["rateHz"].Positive();
         var lowHz = node["lowHz"].Positive();
         var highHz = node["highHz"].Positive();
-        if (highHz <= lowHz) throw node["highHz"].Refusal("the band's upper edge is not above the lower one", "run 'livewave baseline' again");
-        if (highHz >= rateHz / 2) throw node["highHz"].Refusal("the band reaches half the rate", "run 'livewave baseline' again");
+        if (highHz <= lowHz) throw node["highHz"].Refusal("the band's upper edge is not above the lower one", "make the calibration again");
+        if (highHz >= rateHz / 2) throw node["highHz"].Refusal("the band reaches half the rate", "make the calibration again");
         return new CalibrationFingerprint
         {
             Channels = channels,
@@ -78,7 +78,7 @@ internal static class CalibrationReader
             labels.Add(label);
         }
 
-        return labels.Count > 0 ? labels : throw node.Refusal("there is no channel", "run 'livewave baseline' again");
+        return labels.Count > 0 ? labels : throw node.Refusal("there is no channel", "make the calibration again");
     }
 
     private static List<string> PatchChannels(CalibrationNode node, CalibrationFingerprint fingerprint)
@@ -91,7 +91,7 @@ internal static class CalibrationReader
             next = channels.IndexOf(good, next) + 1;
             if (next > 0) continue;
             throw list.Refusal(
-                $"good channel '{CalibrationNode.Plain(good)}' is not among the patch's channels, in their order", "run 'livewave baseline' again");
+                $"good channel '{CalibrationNode.Plain(good)}' is not among the patch's channels, in their order", "make the calibration again");
         }
 
         return channels;
@@ -184,7 +184,7 @@ internal static class CalibrationReader
                 if (Math.Abs(matrix[(i * channels) + j] - across) <= SymmetryTolerance * largest) continue;
                 throw rows[i].Items()[j].Refusal(
                     FormattableString.Invariant($"the covariance is not symmetric: {matrix[(i * channels) + j]} here, {across} across the diagonal"),
-                    "run 'livewave baseline' again");
+                    "make the calibration again");
             }
         }
 
@@ -230,7 +230,7 @@ internal static class CalibrationReader
         var (perMinute, low, high) = (rates[keys[0]].Number(0), rates[keys[3]].Number(0), rates[keys[4]].Number(0));
         if (low > perMinute || high < perMinute)
         {
-            throw rates[keys[0]].Refusal("the rate lies outside of its own interval", "run 'livewave baseline' again");
+            throw rates[keys[0]].Refusal("the rate lies outside of its own interval", "make the calibration again");
         }
 
         return new FalseEventRate(perMinute, low, high, rates[keys[1]].Whole(0), rates[keys[2]].Positive());
@@ -239,6 +239,6 @@ internal static class CalibrationReader
     private static void RequireLength(CalibrationNode node, int length, int expected, string what)
     {
         if (length == expected) return;
-        throw node.Refusal($"{length} {what} where {expected} are expected", "the lists of an entry belong to the same channels: run 'livewave baseline' again");
+        throw node.Refusal($"{length} {what} where {expected} are expected", "the lists of an entry belong to the same channels: make the calibration again");
     }
 }

@@ -1,3 +1,4 @@
+using System.Text;
 using HdrHistogram;
 
 namespace LiveWave.Pipeline;
@@ -29,7 +30,6 @@ public static class LatencyFiles
                 double.IsNaN(stage.LimitMs) ? "n/a" : Cell.Whole(stage.OverLimit));
         }
 
-        using var file = new FileStream(folder.At("latency.hlog"), FileMode.CreateNew, FileAccess.Write);
         foreach (var stage in ledger.Stages)
         {
             stage.Histogram.Tag = stage.Stage.Replace(' ', '-').Replace(",", "", StringComparison.Ordinal);
@@ -37,6 +37,9 @@ public static class LatencyFiles
             stage.Histogram.EndTimeStamp = ended.ToUnixTimeMilliseconds();
         }
 
-        HistogramLogWriter.Write(file, began.UtcDateTime, [.. ledger.Stages.Select(stage => stage.Histogram)]);
+        // The library writes UTF-16; readers of the format expect plain text.
+        using var log = new MemoryStream();
+        HistogramLogWriter.Write(log, began.UtcDateTime, [.. ledger.Stages.Select(stage => stage.Histogram)]);
+        File.WriteAllText(folder.At("latency.hlog"), Encoding.Unicode.GetString(log.ToArray()).TrimStart('\uFEFF'));
     }
 }

@@ -98,6 +98,18 @@ public sealed class BadInput
     }
 
     [Fact]
+    public void A_bad_channel_that_does_not_exist()
+    {
+        using var bench = new Bench();
+        bench.Replace("millrace.sheet.toml", "unit = \"mm\"", "unit = \"mm\"\nbadChannels = [\"r9c9\"]");
+
+        Refused(Watch(bench), "r9c9", "bad channel");
+    }
+
+    [Fact]
+    public void A_folder_in_place_of_a_sheet() => Refused(ProgramRun.Of("watch", Path.GetTempPath()), "folder");
+
+    [Fact]
     public void A_band_beyond_what_the_rate_carries()
     {
         using var bench = new Bench();
@@ -124,6 +136,8 @@ public sealed class BadInput
     [InlineData("--clock", "sundial")]
     [InlineData("--view", "window")]
     [InlineData("--frobnicate", "1")]
+    [InlineData("--out", "")]
+    [InlineData("--session-id", "../elsewhere")]
     public void An_option_that_makes_no_sense(string option, string value)
     {
         var run = ProgramRun.Of("demo", option, value);
