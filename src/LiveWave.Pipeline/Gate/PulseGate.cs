@@ -6,7 +6,7 @@ namespace LiveWave.Pipeline;
 /// <remarks>
 /// <para>Decision thread: <see cref="Commit(in Decision, in StageStamps, int)"/>, <see cref="TryTake"/>,
 /// <see cref="TryTakeNotice"/>, <see cref="Watch"/>, <see cref="NextDueSeconds"/>, <see cref="AwaitSettled"/>. All but the last
-/// are free of locks and never block, and allocate nothing in steady state. Any thread: everything else.</para>
+/// never block, and neither lock nor allocate as long as no output fails. Any thread: everything else.</para>
 /// <para>Each output has a slot for one pulse and a sender thread. Outcomes never flow back to decisions. Nothing is sent on
 /// start, stop or failure. A gate that may not be armed rehearses, and opens only outputs marked as dummies.</para>
 /// </remarks>
@@ -179,7 +179,8 @@ public sealed class PulseGate : IDisposable
     /// driver can't be recalled.</summary>
     /// <param name="reason">Why; the first reason is kept.</param>
     /// <remarks>Any thread but the decision's. It takes effect at once, and returns when sends under way have ended: at once in
-    /// general, at the latest after an output's patience, when that output is declared faulty and closed from outside.</remarks>
+    /// general; after an output's patience that output is declared faulty and closed from outside, which takes its patience
+    /// for quiet and for dispose at most.</remarks>
     public void Disarm(string reason)
     {
         DisarmWithoutWaiting(reason);
@@ -210,14 +211,6 @@ public sealed class PulseGate : IDisposable
 
     /// <summary>Ends the run, if it has not been ended. Outcomes can still be taken.</summary>
     public void Dispose() => End("the run ended");
-
-    private GateState DisarmQuietly(string reason)
-    {
-        ArgumentException.ThrowIfNullOrEmpty(reason);
-        var before = _room.Arming.Disarm(reason);
-        CancelPending();
-        return before.State;
-    }
 
     /// <summary>Tests: opens without threads; <see cref="Lane"/> steps them.</summary>
     internal void OpenOutputs()
@@ -266,6 +259,14 @@ public sealed class PulseGate : IDisposable
         // standing is no longer the one examined.
         if (!_room.Arming.TryChange(examined, next))
             throw Refusal("it was disarmed at the same time", "look at the reason and try again");
+    }
+
+    private GateState DisarmQuietly(string reason)
+    {
+        ArgumentException.ThrowIfNullOrEmpty(reason);
+        var before = _room.Arming.Disarm(reason);
+        CancelPending();
+        return before.State;
     }
 
     private void CancelPending()
