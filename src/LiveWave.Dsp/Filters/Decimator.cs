@@ -21,6 +21,9 @@ namespace LiveWave.Dsp;
 /// </remarks>
 public sealed class Decimator : IConditioner
 {
+    /// <summary>Bands that end below this share of the analysis rate are left whole: −3 dB at their edge at the worst, nothing folded in.</summary>
+    public const double HighestShareOfRate = 0.4;
+
     private const int Order = 8;
     private const double AttenuationDb = 60;
     private const double StopShareOfRate = 0.6;
@@ -60,6 +63,27 @@ public sealed class Decimator : IConditioner
         return isWhole ? (int)factor : 0;
     }
 
+    /// <summary>Why a stream can't be brought down to a rate.</summary>
+    /// <param name="rateHz">The stream's rate, above 0 Hz.</param>
+    /// <param name="analysisRateHz">The rate wanted, above 0 Hz.</param>
+    /// <returns>What is wrong and what to do, for people; null where it can.</returns>
+    public static (string What, string Advice)? Refusal(double rateHz, double analysisRateHz)
+    {
+        var factor = Factor(rateHz, analysisRateHz);
+        if (factor >= 2) return null;
+        if (factor == 1 || rateHz < analysisRateHz)
+        {
+            return (DesignLimits.Text($"it is not below the stream's rate ({rateHz} Hz)"), "leave it out, or lower it");
+        }
+
+        var next = Math.Ceiling(rateHz / analysisRateHz);
+        return (
+            DesignLimits.Text($"it does not divide the stream's rate ({rateHz} Hz)"),
+            next > 2
+                ? DesignLimits.Text($"give {rateHz / (next - 1)} or {rateHz / next}, or another that does")
+                : DesignLimits.Text($"give {rateHz / next}, or a lower one that does"));
+    }
+
     /// <inheritdoc/>
     /// <exception cref="RefusedException">The stream's rate is not a whole number of times, at least twice, the analysis rate.</exception>
     public StreamFormat Prepare(StreamFormat input)
@@ -67,9 +91,12 @@ public sealed class Decimator : IConditioner
         ArgumentNullException.ThrowIfNull(input);
         var rateHz = input.NominalRateHz;
         DesignLimits.Rate(rateHz);
-        _factor = Factor(rateHz, _analysisRateHz);
-        if (_factor < 2) throw Refused(rateHz);
+        if (Refusal(rateHz, _analysisRateHz) is var (what, advice))
+        {
+            throw new RefusedException(DesignLimits.Text($"analysisRateHz is {_analysisRateHz}: {what}"), "", advice);
+        }
 
+        _factor = Factor(rateHz, _analysisRateHz);
         var output = input.AtRate(rateHz / _factor);
         _design = ChebyshevTwoDesign.LowPass(Order, AttenuationDb, StopShareOfRate * output.NominalRateHz, rateHz);
         _filter = new SectionFilter(_design, input.ChannelCount);
@@ -133,21 +160,5 @@ public sealed class Decimator : IConditioner
             conditioned[channel] = 2 * _missing[channel] > _factor ? double.NaN : _filtered[channel];
             _missing[channel] = 0;
         }
-    }
-
-    private RefusedException Refused(double rateHz)
-    {
-        if (_factor == 1 || rateHz < _analysisRateHz)
-        {
-            return new RefusedException(
-                DesignLimits.Text($"analysisRateHz {_analysisRateHz} is not below the stream's rate ({rateHz} Hz)"), "", "leave it out, or lower it");
-        }
-
-        var below = Math.Ceiling(rateHz / _analysisRateHz);
-        var advice = below > 2
-            ? DesignLimits.Text($"give {rateHz / (below - 1)} or {rateHz / below}, or another that does")
-            : DesignLimits.Text($"give {rateHz / below}, or a lower one that does");
-        return new RefusedException(
-            DesignLimits.Text($"analysisRateHz {_analysisRateHz} does not divide the stream's rate ({rateHz} Hz)"), "", advice);
     }
 }

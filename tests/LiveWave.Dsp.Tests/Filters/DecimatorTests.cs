@@ -93,10 +93,10 @@ public class DecimatorTests
     }
 
     [Theory]
-    [InlineData(1000, 400, "analysisRateHz 400 does not divide the stream's rate (1000 Hz); give 500 or 333.3333333333333, or another that does")]
-    [InlineData(1000, 600, "analysisRateHz 600 does not divide the stream's rate (1000 Hz); give 500, or a lower one that does")]
-    [InlineData(1000, 1000, "analysisRateHz 1000 is not below the stream's rate (1000 Hz); leave it out, or lower it")]
-    [InlineData(1000, 2000, "analysisRateHz 2000 is not below the stream's rate (1000 Hz); leave it out, or lower it")]
+    [InlineData(1000, 400, "analysisRateHz is 400: it does not divide the stream's rate (1000 Hz); give 500 or 333.3333333333333, or another that does")]
+    [InlineData(1000, 600, "analysisRateHz is 600: it does not divide the stream's rate (1000 Hz); give 500, or a lower one that does")]
+    [InlineData(1000, 1000, "analysisRateHz is 1000: it is not below the stream's rate (1000 Hz); leave it out, or lower it")]
+    [InlineData(1000, 2000, "analysisRateHz is 2000: it is not below the stream's rate (1000 Hz); leave it out, or lower it")]
     public void A_rate_that_does_not_divide_the_stream_s_is_refused(double rateHz, double analysisRateHz, string message) =>
         Assert.Equal(message, Assert.Throws<RefusedException>(() => new Decimator(analysisRateHz).Prepare(Signals.Format(rateHz, 1))).Message);
 
