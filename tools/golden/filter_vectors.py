@@ -31,6 +31,21 @@ HIGH_PASS = [(250, 0.5, (2,)), (1000, 0.5, (1, 2, 4)), (1000, 14 / 16, (2,)), (1
 NOTCH = [(1000, 50, 30), (1000, 150, 30), (250, 50, 30), (30000, 60, 10)]
 
 
+# (kind, rate, edges, order): Chebyshev II with 40 dB, elliptic with 0.5 and 40 dB unless told; band-stop of Butterworth too
+MORE = [
+    ("butterworth", "band-stop", 1000, (48, 52), 1), ("butterworth", "band-stop", 1000, (48, 52), 2),
+    ("butterworth", "band-stop", 250, (48, 52), 3), ("butterworth", "band-stop", 30000, (48, 52), 2),
+    ("chebyshev-ii", "low-pass", 1000, (100,), 4), ("chebyshev-ii", "low-pass", 1000, (100,), 5), ("chebyshev-ii", "low-pass", 30000, (500,), 6),
+    ("chebyshev-ii", "high-pass", 1000, (0.5,), 4), ("chebyshev-ii", "high-pass", 250, (2,), 3),
+    ("chebyshev-ii", "band-pass", 1000, (8, 12), 4), ("chebyshev-ii", "band-pass", 250, (30, 80), 3), ("chebyshev-ii", "band-pass", 30000, (16, 24), 2),
+    ("chebyshev-ii", "band-stop", 1000, (48, 52), 4), ("chebyshev-ii", "band-stop", 30000, (48, 52), 1),
+    ("elliptic", "low-pass", 1000, (100,), 4), ("elliptic", "low-pass", 1000, (100,), 7), ("elliptic", "low-pass", 30000, (500,), 6),
+    ("elliptic", "low-pass", 250, (40,), 1), ("elliptic", "low-pass", 250, (40,), 2),
+    ("elliptic", "band-pass", 1000, (8, 12), 4), ("elliptic", "band-pass", 250, (30, 80), 3), ("elliptic", "band-pass", 30000, (16, 24), 2),
+    ("elliptic", "band-stop", 1000, (48, 52), 4), ("elliptic", "band-stop", 250, (48, 52), 3),
+]
+
+
 def normals(seed, count):
     state, values = seed, []
 
@@ -62,9 +77,10 @@ def evaluate(sos, rate, frequency):
     return [float(response.real), float(response.imag)], float(delay / rate)
 
 
-def case(kind, order, edges, quality, rate, sos, probes, x):
+def case(kind, order, edges, quality, rate, sos, probes, x, family=None, ripple=None, attenuation=None):
     points = [evaluate(sos, rate, f) for f in probes]
-    return {
+    named = {} if family is None else {"family": family, "ripple_db": ripple, "attenuation_db": attenuation}
+    return named | {
         "kind": kind, "order": order, "edges_hz": edges, "quality": quality, "rate_hz": rate, "probe_hz": probes,
         "response": [p[0] for p in points], "group_delay_seconds": [p[1] for p in points],
         "from_rest": signal.sosfilt(sos, x)[::EVERY].tolist(),
@@ -89,6 +105,24 @@ def cases(x):
         b, a = signal.iirnotch(centre, quality, fs=rate)
         sos = np.array([np.concatenate([b, a])])
         yield case("notch", 2, [centre], quality, rate, sos, [centre / 4, 0.9 * centre, 0.99 * centre, 1.5 * centre], x)
+
+
+    for family, kind, rate, edges, order in MORE:
+        yield more(family, kind, rate, list(edges), order, x)
+
+
+def more(family, kind, rate, edges, order, x):
+    ripple, attenuation = (0.5 if family == "elliptic" else None), (None if family == "butterworth" else 40 if order < 6 else 80)
+    common = {"Wn": edges if len(edges) == 2 else edges[0], "btype": kind.replace("-", ""), "fs": rate, "output": "sos"}
+    if family == "butterworth":
+        sos = signal.butter(order, **common)
+    elif family == "chebyshev-ii":
+        sos = signal.cheby2(order, attenuation, **common)
+    else:
+        sos = signal.ellip(order, ripple, attenuation, **common)
+    low, high = edges[0], edges[-1]
+    probes = [low / 2, 0.93 * low, low, (low + high) / 2 + 0.03 * low, high * 1.01, 1.2 * high]
+    return case(kind, order, edges, None, rate, sos, probes, x, family, ripple, attenuation)
 
 
 def main(path):

@@ -50,13 +50,24 @@ internal sealed class CalibrationChoice
             RateHz = format.NominalRateHz,
             LowHz = band.LowHz,
             HighHz = band.HighHz,
-            Conditioning = sheet.Conditioning.MainsHz > 0 ? [$"mains-notch {sheet.Conditioning.MainsHz} Hz"] : [],
+            Conditioning = ConditioningWords(sheet.Conditioning),
             PhaseEstimator = PhaseWords(band.Phase),
             WaveEstimator = WaveWords(wave),
-            SamplesPerFrame = (int)Math.Round(format.NominalRateHz * wave.EveryMs / 1000, MidpointRounding.AwayFromZero),
+            SamplesPerFrame = (int)Math.Round(RowsASecond(sheet, format) * wave.EveryMs / 1000, MidpointRounding.AwayFromZero),
             Event = new EventPrint(
                 wave.Event.MinimumMs, wave.Event.StabilityMs, wave.Event.StabilityDegrees, wave.Event.GapMs, wave.Event.RefractoryMs),
         };
+    }
+
+    private static double RowsASecond(SessionSheet sheet, StreamFormat format) =>
+        double.IsFinite(sheet.Conditioning.AnalysisRateHz) ? sheet.Conditioning.AnalysisRateHz : format.NominalRateHz;
+
+    private static List<string> ConditioningWords(ConditioningTable conditioning)
+    {
+        var words = new List<string>();
+        if (conditioning.MainsHz > 0) words.Add($"mains-notch {conditioning.MainsHz} Hz");
+        if (double.IsFinite(conditioning.AnalysisRateHz)) words.Add($"decimator {conditioning.AnalysisRateHz} Hz");
+        return words;
     }
 
     private static string PhaseWords(PhaseTable phase) =>

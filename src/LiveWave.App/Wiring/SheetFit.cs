@@ -1,4 +1,5 @@
 using LiveWave.Abstractions;
+using LiveWave.Dsp;
 using LiveWave.Pipeline;
 
 namespace LiveWave.App;
@@ -8,7 +9,7 @@ internal static class SheetFit
 {
     private const double RateTolerance = 1e-6;
 
-    /// <exception cref="RefusedException">Rate or channel count differ.</exception>
+    /// <exception cref="RefusedException">Rate or channel count differ, or the rate can't be brought down as the sheet wants.</exception>
     public static void Check(SessionSheet sheet, StreamFormat format, string recording)
     {
         var expected = sheet.Stream;
@@ -26,6 +27,12 @@ internal static class SheetFit
                 $"the stream has {format.ChannelCount} channels, the sheet expects {channels}",
                 recording,
                 $"play another recording, or mend channels in {sheet.File}");
+        }
+
+        var analysisRateHz = sheet.Conditioning.AnalysisRateHz;
+        if (double.IsFinite(analysisRateHz) && Decimator.Refusal(format.NominalRateHz, analysisRateHz) is var (what, advice))
+        {
+            throw new RefusedException($"analysisRateHz is {analysisRateHz}: {what}", $"{sheet.File}, conditioning", advice);
         }
 
         foreach (var band in sheet.Bands)

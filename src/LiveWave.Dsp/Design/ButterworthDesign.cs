@@ -49,12 +49,32 @@ public static class ButterworthDesign
         for (var k = order / 2; k >= 1; k--)
         {
             var (damping, frequency) = PrototypePole(order, k);
-            var (near, far) = SplitPole(damping * width, frequency * width, centreSquare);
+            var (near, far) = PoleSplit.Of(damping * width, frequency * width, centreSquare);
             sections.Add(Band(width, near.Sigma, near.Square));
             sections.Add(Band(width, far.Sigma, far.Square));
         }
 
         return new SecondOrderSections(rateHz, sections);
+    }
+
+    /// <summary>Takes away what lies between two edges.</summary>
+    /// <param name="order">1 to 16: order of each flank; the filter has twice as many poles.</param>
+    /// <param name="lowHz">Lower edge (−3 dB), above 0.</param>
+    /// <param name="highHz">Upper edge (−3 dB), above <paramref name="lowHz"/>, below half the rate.</param>
+    /// <param name="rateHz">Sampling rate, above 0.</param>
+    /// <returns><paramref name="order"/> sections, gain 1 at 0 Hz and at half the rate, 0 at the band's (warped geometric) centre.</returns>
+    /// <exception cref="Abstractions.RefusedException">A value is out of its range.</exception>
+    public static SecondOrderSections BandStop(int order, double lowHz, double highHz, double rateHz)
+    {
+        DesignLimits.Order(order);
+        var pairs = new PrototypePair[order / 2];
+        for (var k = 1; k <= pairs.Length; k++)
+        {
+            var (damping, frequency) = PrototypePole(order, k);
+            pairs[^k] = new PrototypePair(damping, frequency, ZeroInverseSquare: 0);
+        }
+
+        return new LowPassPrototype(pairs, order % 2 == 1 ? 1 : double.NaN, gainForConstant: 1).BandStop(lowHz, highHz, rateHz);
     }
 
     private static SecondOrderSections OneEdge(int order, double cutoffHz, double rateHz, bool isHighPass)
@@ -96,35 +116,5 @@ public static class ButterworthDesign
     {
         var a0 = 1 + (2 * sigma) + square;
         return (2 * (square - 1) / a0, (1 - (2 * sigma) + square) / a0, a0);
-    }
-
-    /// <summary>
-    /// A low-pass pole p (already times the width) splits in two band-pass poles, s² − ps + c = 0. Each is returned as (σ, |s|²)
-    /// of the quadratic that it forms with its conjugate.
-    /// </summary>
-    /// <remarks>s = (p ± √(p² − 4c))/2, the larger root first, the other as c/s: no difference of near equals.</remarks>
-    private static ((double Sigma, double Square) Near, (double Sigma, double Square) Far) SplitPole(
-        double damping, double frequency, double centreSquare)
-    {
-        var (re, im) = (-damping, frequency);
-        var (rootRe, rootIm) = SquareRoot((re * re) - (im * im) - (4 * centreSquare), 2 * re * im);
-        if ((rootRe * re) + (rootIm * im) < 0) (rootRe, rootIm) = (-rootRe, -rootIm);
-
-        var (farRe, farIm) = ((re + rootRe) / 2, (im + rootIm) / 2);
-        var farSquare = (farRe * farRe) + (farIm * farIm);
-        var nearRe = centreSquare * farRe / farSquare;
-        return ((-nearRe, centreSquare * centreSquare / farSquare), (-farRe, farSquare));
-    }
-
-    /// <summary>The complex root with real part of at least 0.</summary>
-    private static (double Re, double Im) SquareRoot(double re, double im)
-    {
-        var length = Portable.Hypot(re, im);
-        if (length == 0) return (0, 0);
-
-        var larger = Math.Sqrt((length + Math.Abs(re)) / 2);
-        var smaller = Math.Abs(im) / (2 * larger);
-        var (rootRe, rootIm) = re >= 0 ? (larger, smaller) : (smaller, larger);
-        return (rootRe, im < 0 ? -rootIm : rootIm);
     }
 }

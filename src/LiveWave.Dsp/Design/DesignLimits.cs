@@ -7,6 +7,9 @@ namespace LiveWave.Dsp;
 internal static class DesignLimits
 {
     private const int HighestOrder = 16;
+    private const double LargestAttenuationDb = 200;
+    private const double SmallestRippleDb = 1e-6;
+    private const double LargestEdgeRatio = 0.999999;
 
     public static void Rate(double rateHz)
     {
@@ -43,6 +46,31 @@ internal static class DesignLimits
         if (double.IsFinite(quality) && quality > 0) return;
         throw new RefusedException(
             Text($"quality {quality} is not a finite number above 0"), "", "30 makes a notch of 50 Hz about 1.7 Hz wide");
+    }
+
+    /// <summary>How far what is taken away lies below what stays.</summary>
+    public static void Attenuation(double attenuationDb)
+    {
+        if (attenuationDb is > 0 and <= LargestAttenuationDb) return;
+        throw new RefusedException(
+            Text($"attenuationDb {attenuationDb} is not above 0 and at most {LargestAttenuationDb} dB"), "", "40 to 80 dB do for most filters");
+    }
+
+    /// <summary>How far the gain may fall in the band, and below it what is taken away.</summary>
+    public static void Ripple(double rippleDb, double attenuationDb)
+    {
+        Attenuation(attenuationDb);
+        if (rippleDb >= SmallestRippleDb && rippleDb < attenuationDb) return;
+        throw new RefusedException(
+            Text($"rippleDb {rippleDb} is not at least 0.000001 dB and below attenuationDb ({attenuationDb} dB)"), "", "0.1 to 1 dB do for most filters");
+    }
+
+    /// <summary>What lies between an elliptic filter's two edges, as their ratio: beyond this, doubles don't tell them apart.</summary>
+    public static void Steepness(double edgeRatio, int order)
+    {
+        if (edgeRatio is > 0 and < LargestEdgeRatio) return;
+        throw new RefusedException(
+            Text($"order {order} is far more than this ripple and attenuation need"), "", "lower the order, or raise attenuationDb or lower rippleDb");
     }
 
     /// <summary>Numbers as 1.5, whatever the locale.</summary>

@@ -33,7 +33,7 @@ public sealed record CalibrationFingerprint
     /// <summary>Name of the wave estimator, with its options.</summary>
     public required string WaveEstimator { get; init; }
 
-    /// <summary>Rows from frame to frame.</summary>
+    /// <summary>Rows from frame to frame, counted at the analysis rate.</summary>
     public required int SamplesPerFrame { get; init; }
 
     /// <summary>The event settings.</summary>

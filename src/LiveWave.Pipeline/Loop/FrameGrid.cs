@@ -8,7 +8,7 @@ public sealed class FrameGrid
     private long _last = long.MinValue;
 
     /// <summary>Makes a grid.</summary>
-    /// <param name="samplesPerFrame">Rows of the stream as received between frames, at least 1.</param>
+    /// <param name="samplesPerFrame">Rows of the stream as received between frames, at least 1: of the analysis rate, times the factor of decimation.</param>
     public FrameGrid(long samplesPerFrame)
     {
         ArgumentOutOfRangeException.ThrowIfLessThan(samplesPerFrame, 1);

@@ -50,6 +50,11 @@ public sealed class RunSetupBuilder(SessionSheet sheet, StreamFormat format, Par
             made.Add(Maker<IConditioner>("mains-notch", "conditioning", ("mainsHz", sheet.Conditioning.MainsHz)));
         }
 
+        if (double.IsFinite(sheet.Conditioning.AnalysisRateHz))
+        {
+            made.Add(Maker<IConditioner>("decimator", "conditioning", ("analysisRateHz", sheet.Conditioning.AnalysisRateHz)));
+        }
+
         return made;
     }
 

@@ -11,6 +11,7 @@ public sealed class BuiltInEstimators : IPlugin
     {
         ArgumentNullException.ThrowIfNull(catalog);
         catalog.Add<IConditioner>("mains-notch", options => new MainsNotch(options.Number("mainsHz", 50, 1, 1000)));
+        catalog.Add<IConditioner>("decimator", options => new Decimator(options.Number("analysisRateHz", 1000, 20, 20_000)));
         catalog.Add<IPhaseEstimator>("oscillator", _ => new OscillatorEstimator());
         catalog.Add<IPhaseEstimator>(
             "bandpass-quadrature", options => new BandpassQuadratureEstimator((int)options.Number("order", 2, 1, 8)));

@@ -23,6 +23,15 @@ public sealed class SheetCrossCheckTests
     [InlineData("name = \"quill\"", "name = \"quill\"\nchannels = []", "9: patch.channels: it is empty")]
     [InlineData("name = \"quill\"", "name = \"quill\"\nchannels = [\"a1\"]\nbadChannels = [\"a2\"]", "10: patch.badChannels: 'a2' is not a channel of this patch")]
     [InlineData("[stream]", "[stream]\nrateHz = 100\n[conditioning]\nmainsHz = 50\n[session.x]", "7: conditioning.mainsHz: it is not below half the stream's rate")]
+    [InlineData(
+        "[stream]", "[conditioning]\nanalysisRateHz = 300\n[stream]\nrateHz = 1000",
+        "5: conditioning.analysisRateHz: it does not divide the stream's rate (1000 Hz); give 333.3333333333333 or 250, or another that does")]
+    [InlineData(
+        "[stream]", "[conditioning]\nanalysisRateHz = 1000\n[stream]\nrateHz = 1000",
+        "5: conditioning.analysisRateHz: it is not below the stream's rate (1000 Hz); leave it out, or lower it")]
+    [InlineData(
+        "[stream]", "[conditioning]\nanalysisRateHz = 50\n[stream]",
+        "16: band.highHz: it is above what is left whole at conditioning.analysisRateHz; give a number, at most 20 (Hz), or raise the analysis rate")]
     public void Is_refused_where_it_contradicts(string was, string becomes, string expected)
     {
         // One case moves a key out of its table to make room; what that breaks beside is not looked at.
@@ -39,6 +48,17 @@ public sealed class SheetCrossCheckTests
         var refusal = Assert.Throws<RefusedException>(() => SheetReader.Parse(text, "s.toml"));
 
         Assert.Equal("s.toml:18: band.wave.everyMs: it is shorter than one row; give a number, at least 10 (ms)", refusal.Message);
+    }
+
+    [Fact]
+    public void A_reading_is_not_asked_for_more_often_than_rows_are_left()
+    {
+        var text = SheetTexts.ShortBut("[stream]", "[conditioning]\nanalysisRateHz = 100\n[stream]\nrateHz = 1000")
+            .Replace("\"planar\"\n\n", "\"planar\"\neveryMs = 9\n\n", StringComparison.Ordinal);
+
+        var refusal = Assert.Throws<RefusedException>(() => SheetReader.Parse(text, "s.toml"));
+
+        Assert.Equal("s.toml:20: band.wave.everyMs: it is shorter than one row; give a number, at least 10 (ms)", refusal.Message);
     }
 
     [Fact]

@@ -80,6 +80,28 @@ public sealed class BadInput
     }
 
     [Fact]
+    public void A_calibration_for_another_analysis_rate()
+    {
+        using var bench = new Bench();
+        bench.Replace("millrace.sheet.toml", "mainsHz = 0", "mainsHz = 0\nanalysisRateHz = 500");
+
+        Refused(
+            Watch(bench),
+            "the conditioning is none in the calibration and 'decimator 500 Hz' in this run",
+            "the distance of frames is 4 samples in the calibration and 2 samples in this run");
+    }
+
+    [Fact]
+    public void An_analysis_rate_that_does_not_divide_the_recording_s()
+    {
+        using var bench = new Bench();
+        bench.Replace("millrace.sheet.toml", "rateHz = 1000", "");
+        bench.Replace("millrace.sheet.toml", "mainsHz = 0", "mainsHz = 0\nanalysisRateHz = 300");
+
+        Refused(Watch(bench), "analysisRateHz is 300: it does not divide the stream's rate (1000 Hz)", "give 333.3333333333333 or 250");
+    }
+
+    [Fact]
     public void An_unknown_key_names_file_line_and_key()
     {
         using var bench = new Bench();

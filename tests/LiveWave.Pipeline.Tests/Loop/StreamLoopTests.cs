@@ -111,6 +111,33 @@ public sealed class StreamLoopTests
         Assert.NotEmpty(rig.Decisions);
     }
 
+    [Theory]
+    [InlineData(4, 250)]
+    [InlineData(16, 62.5)]
+    public void At_an_analysis_rate_frames_keep_their_distance_and_events_their_duration(double everyMs, double framesPerSecond)
+    {
+        var plain = Rig.Setup();
+        var rows = Rig.Rows(plain, seconds: 12);
+        var wave = plain.Tracks[0].Waves[0] with { MakeWave = () => new PlanarEstimator(new PlanarOptions(everyMs)) };
+        plain = plain with { Tracks = [plain.Tracks[0] with { Waves = [wave] }] };
+        var halved = plain with { Conditioners = [() => new Decimator(250)] };
+
+        var whole = Rig.Play(plain, new FakeFeed(plain.Format, rows), blockRows: 20);
+        var rig = Rig.Play(halved, new FakeFeed(halved.Format, rows), blockRows: 20);
+        var inOtherBlocks = Rig.Play(halved, new FakeFeed(halved.Format, rows), blockRows: 7);
+
+        Assert.InRange(rig.Readings.Count, (12 * framesPerSecond) - 1, 12 * framesPerSecond);
+        Assert.Equal(rig.Tables(), inOtherBlocks.Tables());
+        var (expected, events) = (Ended(whole), Ended(rig));
+        Assert.NotEmpty(events);
+        Assert.Equal(expected.Count, events.Count);
+        for (var i = 0; i < events.Count; i++)
+        {
+            Assert.InRange(events[i].Onset.Index - expected[i].Onset.Index, -15, 15);      // 30 ms; rows of the stream
+            Assert.InRange(Length(events[i]) - Length(expected[i]), -20, 20);
+        }
+    }
+
     [Fact]
     public void A_limit_of_rows_ends_the_run_at_that_row_whatever_the_block_size()
     {
@@ -184,6 +211,10 @@ public sealed class StreamLoopTests
         Assert.NotEmpty(acted);
         Assert.All(acted, verdict => Assert.Equal(OutcomeKind.NotArmed, verdict.Outcome.Kind));
     }
+
+    private static long Length(in WaveEvent wave) => wave.Last.Index - wave.Onset.Index;
+
+    private static List<WaveEvent> Ended(Rig rig) => [.. rig.Events.Where(wave => wave.State == WaveEventState.Quiet)];
 
     private static void Step(DecisionCore core, double[][] rows, int i)
     {

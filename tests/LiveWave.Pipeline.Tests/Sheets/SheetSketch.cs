@@ -31,6 +31,7 @@ internal sealed class SheetSketch
         "limits.pulsesPerMinute" => 3L,
         "limits.oldestDataMs" => 50.0,
         "conditioning.mainsHz" => 60.0,
+        "conditioning.analysisRateHz" => 250.0,
         "patch.axes" => new Dictionary<string, object?> { ["anterior"] = 10L, ["left"] = 100.5 },
         "output.options" => new Dictionary<string, object?> { ["widthMs"] = 2L, ["line"] = "a", ["inverted"] = true },
         _ => SampleOf(key),

@@ -31,8 +31,9 @@ public static partial class SheetKeys
             usual: 0, low: 0, high: 1000),
         Text("amplifier.acquisitionDelayFrom", "Where that figure comes from: data sheet, measured by whom and how", usual: ""),
         NotYet("amplifier.highPassHz", SheetKeyType.Number, "Corner of its high-pass filter", "Hz"),
+        NotYet("amplifier.highPassOrder", SheetKeyType.Whole, "Order of that filter"),
         NotYet("amplifier.lowPassHz", SheetKeyType.Number, "Corner of its low-pass filter", "Hz"),
-        NotYet("amplifier.order", SheetKeyType.Whole, "Order of these filters"),
+        NotYet("amplifier.lowPassOrder", SheetKeyType.Whole, "Order of that filter"),
         NotYet("amplifier.polarity", SheetKeyType.Text, "Whether negative is shown up"),
         NotYet("amplifier.counterChannel", SheetKeyType.Text, "The channel in which it counts its samples, for finding losses"),
     ];

@@ -38,9 +38,11 @@ public static partial class SheetKeys
             Default = 0.0,
         },
         Number(
+            "conditioning.analysisRateHz", "Hz", "Rate to which rows are brought down after the notch; must divide the stream's rate",
+            otherwise: "the stream's rate", low: 20, high: 20_000),
+        Number(
             "conditioning.blankAfterPulseMs", "ms", "How long samples count as missing from a decision's due row on; 0: none",
             usual: 5, low: 0, high: 1000),
-        NotYet("conditioning.analysisRateHz", SheetKeyType.Number, "Rate to which the stream is decimated", "Hz"),
         NotYet("conditioning.reference", SheetKeyType.Text, "Re-reference: none, or the patch's mean"),
         NotYet("conditioning.artefactMicrovolts", SheetKeyType.Number, "Size at which a sample counts as missing", "microvolts"),
     ];

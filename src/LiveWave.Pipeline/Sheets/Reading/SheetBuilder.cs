@@ -64,6 +64,7 @@ internal sealed class SheetBuilder(string file)
     private static ConditioningTable Conditioning(CheckedTable table) => new()
     {
         MainsHz = table.Number("mainsHz"),
+        AnalysisRateHz = table.Number("analysisRateHz"),
         BlankAfterPulseMs = table.Number("blankAfterPulseMs"),
     };
 

@@ -1,3 +1,5 @@
+using LiveWave.Dsp;
+
 namespace LiveWave.Pipeline;
 
 /// <summary>What no single key can tell: names that refer to one another, edges and rates, limits that contradict each other. Values that
@@ -16,12 +18,8 @@ internal sealed class SheetCrossChecks(List<SheetFault> faults)
         var rateHz = sheet.Table("stream")?.Number("rateHz") ?? double.NaN;
         var channels = sheet.Table("stream")?.Whole("channels");
         foreach (var patch in sheet.Tables("patch")) CheckPatch(patch, channels);
-        foreach (var band in sheet.Tables("band")) CheckBand(band, rateHz);
-        if (sheet.Table("conditioning") is { } conditioning && conditioning.Number("mainsHz") >= 0.5 * rateHz)
-        {
-            Fault(conditioning, "mainsHz", "it is not below half the stream's rate", "give 0: such a rate can't hold mains hum");
-        }
-
+        var analysisRateHz = sheet.Table("conditioning") is { } conditioning ? CheckConditioning(conditioning, rateHz) : double.NaN;
+        foreach (var band in sheet.Tables("band")) CheckBand(band, rateHz, analysisRateHz);
         foreach (var rule in sheet.Tables("rule")) CheckRule(rule, sheet);
         if (sheet.Table("limits") is { } limits) CheckLimits(limits);
     }
@@ -30,6 +28,20 @@ internal sealed class SheetCrossChecks(List<SheetFault> faults)
     {
         if (stream.Wrote("file") || stream.Wrote("query")) return;
         Fault(stream, "file", "the stream has neither a file nor a query", "give file = \"recording.xdf\"; a query is not yet built");
+    }
+
+    /// <returns>The analysis rate; NaN where rows stay as they come, or where it was refused.</returns>
+    private double CheckConditioning(CheckedTable conditioning, double rateHz)
+    {
+        if (conditioning.Number("mainsHz") >= 0.5 * rateHz)
+        {
+            Fault(conditioning, "mainsHz", "it is not below half the stream's rate", "give 0: such a rate can't hold mains hum");
+        }
+
+        var analysisRateHz = conditioning.Number("analysisRateHz");
+        if (double.IsNaN(rateHz) || double.IsNaN(analysisRateHz) || Decimator.Refusal(rateHz, analysisRateHz) is not { } refusal) return analysisRateHz;
+        Fault(conditioning, "analysisRateHz", refusal.What, refusal.Advice);
+        return double.NaN;
     }
 
     private void CheckPatch(CheckedTable patch, long? streamChannels)
@@ -57,7 +69,7 @@ internal sealed class SheetCrossChecks(List<SheetFault> faults)
         }
     }
 
-    private void CheckBand(CheckedTable band, double rateHz)
+    private void CheckBand(CheckedTable band, double rateHz, double analysisRateHz)
     {
         var (lowHz, highHz) = (band.Number("lowHz"), band.Number("highHz"));
         if (lowHz >= highHz)
@@ -71,10 +83,18 @@ internal sealed class SheetCrossChecks(List<SheetFault> faults)
             Fault(band, edge, "it is not below half the stream's rate", $"give a number below {SheetValues.Written(0.5 * rateHz)} (Hz)");
         }
 
+        else if (highHz > Decimator.HighestShareOfRate * analysisRateHz)
+        {
+            var highest = SheetValues.Written(Decimator.HighestShareOfRate * analysisRateHz);
+            Fault(
+                band, "highHz", "it is above what is left whole at conditioning.analysisRateHz",
+                $"give a number, at most {highest} (Hz), or raise the analysis rate");
+        }
+
         RefuseTwice(band.Tables("wave"), "estimator");
         foreach (var wave in band.Tables("wave"))
         {
-            var rowMs = 1000 / rateHz;
+            var rowMs = 1000 / (double.IsNaN(analysisRateHz) ? rateHz : analysisRateHz);
             if (wave.Number("everyMs") >= rowMs || double.IsNaN(rowMs) || double.IsNaN(wave.Number("everyMs"))) continue;
             Fault(wave, "everyMs", "it is shorter than one row", $"give a number, at least {SheetValues.Written(rowMs)} (ms)");
         }
