@@ -50,6 +50,9 @@ public sealed class SceneFeed : IFeed
     /// <summary>Rows made so far, lost ones included.</summary>
     public long RowsMade => _next;
 
+    /// <summary>How many of them were lost by a fault.</summary>
+    public long RowsLost => _next - _received;
+
     /// <inheritdoc/>
     public PullResult Pull(SampleBlock into, TimeSpan atMost)
     {

@@ -13,7 +13,7 @@ public static partial class SheetKeys
     ];
 
     /// <summary>The same rows, to look up.</summary>
-    internal static KeyTable Lookup { get; } = new(All, "sheet");
+    public static KeyTable Lookup { get; } = new(All, "sheet");
 
     /// <summary>The row of a key.</summary>
     /// <param name="path">Tables and key, with dots.</param>
