@@ -24,17 +24,14 @@ internal static class SynthVerb
         var truth = TruthTable.PathBeside(options.Out);
         var electrodes = scene.Patches.ToDictionary(patch => ElectrodesBeside(options.Out, scene, patch), patch => patch);
         foreach (var path in (string[])[truth, .. electrodes.Keys]) RefuseIfThere(path);
-        long bytes;
         using (var writer = new XdfWriter(options.Out, [SamplesHead(scene, feed), TruthHead(scene)]))
         {
             Write(scene, feed, writer, isShown: !options.Json && !Console.IsErrorRedirected);
-            writer.Dispose();
-            bytes = writer.Length;
         }
 
         File.WriteAllText(truth, SceneTruthText.Table(feed.Truth));
         foreach (var (path, patch) in electrodes) File.WriteAllText(path, SceneTruthText.Electrodes(patch));
-        var summary = new SynthSummary(scene, feed, options, truth, [.. electrodes.Keys], bytes);
+        var summary = new SynthSummary(scene, feed, options, truth, [.. electrodes.Keys], new FileInfo(options.Out).Length);
         Console.Out.Write(options.Json ? summary.Json() : summary.Text());
         return ExitCode.Done;
     }

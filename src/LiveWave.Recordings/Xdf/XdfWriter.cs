@@ -41,9 +41,6 @@ public sealed class XdfWriter : IDisposable
         _file.Flush(flushToDisk: true);
     }
 
-    /// <summary>Bytes handed to the system so far.</summary>
-    public long Length => _file.Position;
-
     /// <summary>Adds a row.</summary>
     /// <param name="stream">The stream's number.</param>
     /// <param name="stampSeconds">Its stamp, never before the stream's last one.</param>
