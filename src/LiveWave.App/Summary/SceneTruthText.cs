@@ -62,7 +62,7 @@ internal static class SceneTruthText
         _ => "focus",
     };
 
-    private static string Cell(double value, string format) => double.IsNaN(value) ? "n/a" : value.ToString(format, CultureInfo.InvariantCulture);
+    private static string Cell(double value, string format) => !double.IsFinite(value) ? "n/a" : value.ToString(format, CultureInfo.InvariantCulture);
 
     private static JsonValue? Known(double value) => double.IsFinite(value) ? JsonValue.Create(value) : null;
 }

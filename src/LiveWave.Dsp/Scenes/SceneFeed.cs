@@ -14,6 +14,7 @@ public sealed class SceneFeed : IFeed
     private readonly double[] _gains;
     private readonly double[] _offsets;
     private readonly double[] _row;
+    private int _firstOpen;
     private long _next;
     private long _received;
 
@@ -30,7 +31,7 @@ public sealed class SceneFeed : IFeed
         BandMicrovolts = SceneNoise.BandMicrovolts(scene);
         Truth = TruthDraw.Of(scene, BandMicrovolts);
         _events = Drives(scene, Truth);
-        _faults = [.. scene.Faults.Select((fault, i) => new FaultOnChannels(fault, Numbers(fault), new SceneLots(scene.Seed, "fault", "", i)))];
+        _faults = [.. scene.Faults.Select((fault, i) => new FaultOnChannels(fault, scene.RateHz, Numbers(fault), new SceneLots(scene.Seed, "fault", "", i)))];
         var rigSeed = scene.Rig.Seed ?? scene.Seed;
         _gains = PerChannel("gain", lots => Portable.Exp(scene.Rig.GainLogSd * lots.Normal()), rigSeed);
         _offsets = PerChannel("offset", lots => scene.Rig.OffsetMicrovolts * lots.Normal(), rigSeed);
@@ -62,8 +63,7 @@ public sealed class SceneFeed : IFeed
         {
             var seconds = _next / _scene.RateHz;
             Make(seconds);
-            _next++;
-            if (IsLost(seconds)) continue;
+            if (IsLost(_next++)) continue;
             var row = into.Append(_scene.FirstStampSeconds + seconds);
             for (var i = 0; i < row.Length; i++) row[i] = AsWritten(_row[i]);
             _received++;
@@ -97,7 +97,12 @@ public sealed class SceneFeed : IFeed
             first += patch.Layout.Electrodes.Count;
         }
 
-        return [.. truths.Select(truth => new SiteDrive(truth, places[truth.Event.Patch].Geometry, places[truth.Event.Patch].First))];
+        return
+        [
+            .. truths
+                .Select(truth => new SiteDrive(truth, places[truth.Event.Patch].Geometry, places[truth.Event.Patch].First))
+                .OrderBy(drive => drive.StartSeconds),
+        ];
     }
 
     private double[] PerChannel(string part, Func<SceneLots, double> draw, ulong seed) =>
@@ -118,16 +123,21 @@ public sealed class SceneFeed : IFeed
     private void Make(double seconds)
     {
         _noise.Next(_next, _row);
-        foreach (var drive in _events) drive.Add(seconds, _row);
+        for (var i = _firstOpen; i < _events.Length && _events[i].StartSeconds <= seconds; i++)
+        {
+            if (i == _firstOpen && _events[i].EndSeconds < seconds) _firstOpen++;
+            else _events[i].Add(seconds, _row);
+        }
+
         for (var i = 0; i < _row.Length; i++) _row[i] = (_gains[i] * _row[i]) + _offsets[i];
-        foreach (var fault in _faults) fault.Apply(seconds, _row);
+        foreach (var fault in _faults) fault.Apply(_next, _row);
     }
 
-    private bool IsLost(double seconds)
+    private bool IsLost(long number)
     {
         foreach (var fault in _faults)
         {
-            if (fault.Loses(seconds)) return true;
+            if (fault.Loses(number)) return true;
         }
 
         return false;

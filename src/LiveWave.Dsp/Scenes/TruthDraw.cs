@@ -71,7 +71,7 @@ internal static class TruthDraw
             SpeedMetresPerSecond = isRadial ? frequency * wavelength / 1000 : double.NaN,
             CentreXMm = !hasCentre ? double.NaN : double.IsNaN(asked.CentreXMm) ? geometry.MeanXMm : asked.CentreXMm,
             CentreYMm = !hasCentre ? double.NaN : double.IsNaN(asked.CentreYMm) ? geometry.MeanYMm : asked.CentreYMm,
-            SnrDecibels = bandMicrovolts == 0 ? double.NaN : Portable.Log(amplitude / bandMicrovolts) / (0.5 * TenthOfBel),
+            SnrDecibels = double.IsNaN(snr) && bandMicrovolts > 0 ? Portable.Log(amplitude / bandMicrovolts) / (0.5 * TenthOfBel) : snr,
             AmplitudeMicrovolts = amplitude,
         };
     }

@@ -100,6 +100,11 @@ internal sealed class SceneCrossChecks(List<SheetFault> faults)
             Fault(patch, "name", $"{SheetValues.Quoted(name)} is taken by another patch", "give each its own");
         }
 
+        if (patch.Flag("withoutCorners") && patch.Whole("rows") <= 2 && patch.Whole("columns") <= 2)
+        {
+            Fault(patch, "withoutCorners", "nothing is left without corners", "leave it out, or give more rows or columns");
+        }
+
         foreach (var key in (string[])["rows", "columns", "pitchMm"])
         {
             if (patch.Wrote("electrodes") && patch.Wrote(key)) Fault(patch, key, "the patch has a table of electrodes", "leave one of the two out");

@@ -105,7 +105,7 @@ public static class SceneKeys
 
     private static SheetKey[] SeriesRows() =>
     [
-        Whole("event.repeats", "How many such events", usual: 1, high: 100_000),
+        Whole("event.repeats", "How many such events", usual: 1, high: 10_000),
         Number("event.everySeconds", "s", "From onset to onset", otherwise: "needed with repeats", low: 0, high: 86_400, above: true),
         Number("event.everySpreadSeconds", "s", "Onsets move by lot, up to this to either side", usual: 0, low: 0, high: 86_400),
         Number("event.directionSpreadDegrees", "degrees", "Directions differ by lot, up to this to either side; 180: any", usual: 0, low: 0, high: 180),

@@ -46,6 +46,7 @@ public sealed class SceneReaderTests
         { "seconds = 10", "seconds = 0", "scene.seconds", "it is 0" },
         { "seconds = 10", "seconds = 1.2", "event.onsetSeconds", "after the scene's end" },
         { "rows = 4", "", "patch.rows", "missing" },
+        { "rows = 4\ncolumns = 4", "rows = 2\ncolumns = 1\nwithoutCorners = true", "patch.withoutCorners", "nothing is left" },
         { "rows = 4", "rows = 4\nelectrodes = \"e.tsv\"", "patch.rows", "the patch has a table" },
         { "\"planar\"", "\"planer\"", "event.kind", "did you mean 'planar'?" },
         { "\"planar\"", "\"front\"", "event.kind", "not yet built" },

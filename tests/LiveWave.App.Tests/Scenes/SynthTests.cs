@@ -38,7 +38,7 @@ public sealed class SynthTests : IDisposable
         frequencyHz = 18
         snrDecibels = 7.5
         directionDegrees = -45
-        speedMetresPerSecond = 0.045
+        speedMetresPerSecond = 0.04
         [[fault]]
         kind = "gap"
         onsetSeconds = 3.2

@@ -135,6 +135,33 @@ public sealed class SceneFeedTests
     }
 
     [Fact]
+    public void A_pull_allocates_nothing()
+    {
+        using var feed = new SceneFeed(Whole);
+        var block = new SampleBlock(feed.Format, 100);
+        for (var i = 0; i < 8; i++) _ = feed.Pull(block, TimeSpan.Zero);
+
+        var before = GC.GetAllocatedBytesForCurrentThread();
+        for (var i = 0; i < 8; i++) _ = feed.Pull(block, TimeSpan.Zero);
+
+        Assert.Equal(0, GC.GetAllocatedBytesForCurrentThread() - before);
+    }
+
+    [Fact]
+    public void Events_that_overlap_add_up()
+    {
+        var (one, other) = (Scenery.Wave(WaveKind.Synchronous), Scenery.Wave(WaveKind.Expanding) with { WavelengthMm = 3, OnsetSeconds = 0.3, DurationSeconds = 0.2 });
+
+        var both = Scenery.Play(Scenery.Silent(2, null, one, other, other with { OnsetSeconds = 1 })).Rows;
+
+        var alone = Scenery.Play(Scenery.Silent(2, null, one)).Rows;
+        Assert.Equal(alone[100], both[100]);
+        Assert.Equal(alone[800], both[800]);
+        Assert.NotEqual(alone[400], both[400]);
+        Assert.NotEqual(alone[1100], both[1100]);
+    }
+
+    [Fact]
     public void Two_patches_lie_side_by_side_in_a_row_and_have_events_of_their_own()
     {
         var scene = Scenery.Silent(2, null, Scenery.Wave(WaveKind.Synchronous) with { Patch = "other" }) with
