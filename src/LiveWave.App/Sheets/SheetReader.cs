@@ -1,4 +1,3 @@
-using System.Text;
 using LiveWave.Abstractions;
 using LiveWave.Pipeline;
 
@@ -11,17 +10,14 @@ namespace LiveWave.App;
 /// rest means can't be known then.</remarks>
 internal static class SheetReader
 {
-    /// <summary>Larger files are no sheets: somebody gave the recording.</summary>
-    private const int MostBytes = 1_000_000;
-
-    private static readonly UTF8Encoding StrictUtf8 = new(encoderShouldEmitUTF8Identifier: false, throwOnInvalidBytes: true);
+    private static readonly TomlFile Kind = new("session sheet", "the sheet", "give the .toml file that describes the run");
 
     /// <summary>Reads a sheet.</summary>
     /// <param name="path">Its file. A patch without calibration gets the one beside the sheet, if that is there.</param>
     /// <exception cref="RefusedException">It can't be read, or something in it is wrong.</exception>
     public static SessionSheet Read(string path)
     {
-        var sheet = Parse(TextOf(path), path);
+        var sheet = Parse(Kind.TextOf(path), path);
         if (!File.Exists(sheet.PathOf(sheet.CalibrationBeside))) return sheet;
         return sheet with
         {
@@ -37,45 +33,6 @@ internal static class SheetReader
     {
         var parsed = TomlTables.Parse(text, out var faults);
         if (faults.Count == 0 && SheetForm.TryRead(parsed, path, out var sheet, out faults)) return sheet;
-        throw Refusal(path, faults);
-    }
-
-    private static RefusedException Refusal(string path, IReadOnlyList<SheetFault> faults)
-    {
-        var refusals = faults.Select(fault => new RefusedException(fault.What, Where(path, fault), fault.Advice)).ToArray();
-        return refusals.Length == 1
-            ? refusals[0]
-            : new RefusedException(string.Join('\n', refusals.Select(refusal => refusal.Message)), where: "", advice: "");
-    }
-
-    private static string Where(string path, SheetFault fault) =>
-        fault.Key.Length == 0 ? $"{path}:{fault.Line}" : $"{path}:{fault.Line}: {fault.Key}";
-
-    private static string TextOf(string path)
-    {
-        if (Directory.Exists(path)) throw new RefusedException("it is a folder", path, "give the .toml file that describes the run");
-        try
-        {
-            using var file = File.OpenRead(path);
-            if (file.Length > MostBytes)
-            {
-                throw new RefusedException("it is too large for a session sheet", path, "give the .toml file that describes the run");
-            }
-
-            using var reader = new StreamReader(file, StrictUtf8);
-            return reader.ReadToEnd();
-        }
-        catch (DecoderFallbackException e)
-        {
-            throw new RefusedException("it is not UTF-8 text", path, "give the .toml file that describes the run", e);
-        }
-        catch (Exception e) when (e is FileNotFoundException or DirectoryNotFoundException)
-        {
-            throw new RefusedException("there is no such file", path, "give the path of a session sheet", e);
-        }
-        catch (Exception e) when (e is IOException or UnauthorizedAccessException or ArgumentException or NotSupportedException)
-        {
-            throw new RefusedException("the sheet can't be read", path, e.Message, e);
-        }
+        throw TomlFile.Refusal(path, faults);
     }
 }

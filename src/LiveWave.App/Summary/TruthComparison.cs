@@ -23,7 +23,7 @@ internal sealed class TruthComparison
         _rotationDegrees = rotationDegrees;
         var seen = truth.Where(row => row.UntilSeconds <= lastStamp - firstStamp).ToList();
         var planar = seen.Where(row => row.Kind == WaveKinds.Word(WaveKind.Planar)).ToList();
-        var decoys = seen.Except(planar).ToList();
+        var decoys = seen.Where(row => !WaveKinds.TryParse(row.Kind, out var kind) || !WaveKinds.Travels(kind)).ToList();
         var travelling = events.Where(wave => WaveKinds.Travels(wave.Kind)).ToList();
         var pairs = planar.Select(row => (Row: row, Event: Find(row, travelling))).ToList();
         Strong = planar.Count(row => row.IsStrong);
@@ -48,7 +48,7 @@ internal sealed class TruthComparison
 
     public int WeakFound { get; }
 
-    /// <summary>Synchronous and in-phase bursts.</summary>
+    /// <summary>What does not travel: synchronous, in-phase and standing bursts.</summary>
     public int Decoys { get; }
 
     public int DecoysTaken { get; }

@@ -8,7 +8,7 @@ internal static class CommandTree
 {
     private const string DemoSessionId = "millrace-demo";
 
-    public static RootCommand Build(Func<WatchOptions, int> watch)
+    public static RootCommand Build(Func<WatchOptions, int> watch, Func<SynthOptions, int> synth)
     {
         var root = new RootCommand(
             "LiveWave watches travelling waves on electrode arrays while they pass, decides by rule, and rehearses pulses. "
@@ -16,6 +16,7 @@ internal static class CommandTree
             + "3 the machine or rig failed.");
         root.Subcommands.Add(Demo(watch));
         root.Subcommands.Add(Watch(watch));
+        root.Subcommands.Add(Synth(synth));
         return root;
     }
 
@@ -43,13 +44,32 @@ internal static class CommandTree
         {
             if (!result.GetValue(keys) && result.GetValue(sheet) is null) result.AddError("give the SHEET to watch with");
         });
-        command.SetAction(parsed => parsed.GetValue(keys) ? PrintKeys() : watch(common.Read(parsed, "watch", parsed.GetValue(sheet)!, parsed.GetValue(from))));
+        command.SetAction(parsed => parsed.GetValue(keys) ? PrintKeys(SheetKeys.Lookup) : watch(common.Read(parsed, "watch", parsed.GetValue(sheet)!, parsed.GetValue(from))));
         return command;
     }
 
-    private static int PrintKeys()
+    private static Command Synth(Func<SynthOptions, int> synth)
     {
-        Console.Out.Write(SheetReference.Text());
+        var scene = new Argument<string?>("SCENE") { Description = "The scene, a TOML file.", Arity = ArgumentArity.ZeroOrOne };
+        var keys = new Option<bool>("--keys") { Description = "Print every key of a scene with its unit, default and range, and end." };
+        var file = new Option<string?>("--out") { Description = "The recording to make (XDF); never overwritten.", HelpName = "FILE" };
+        var json = new Option<bool>("--json") { Description = "Print the summary as JSON." };
+        var command = new Command("synth", "Makes a recording with known truth from a scene. Keys of the scene: synth --keys.") { scene, file, keys, json };
+        command.Validators.Add(result =>
+        {
+            if (result.GetValue(keys)) return;
+            if (result.GetValue(scene) is null) result.AddError("give the SCENE to make");
+            if (string.IsNullOrEmpty(result.GetValue(file))) result.AddError("give --out FILE, the recording to make");
+        });
+        command.SetAction(parsed => parsed.GetValue(keys)
+            ? PrintKeys(SceneKeys.Lookup)
+            : synth(new SynthOptions(parsed.GetValue(scene)!, parsed.GetValue(file)!, parsed.GetValue(json))));
+        return command;
+    }
+
+    private static int PrintKeys(KeyTable keys)
+    {
+        Console.Out.Write(SheetReference.Text(keys));
         return ExitCode.Done;
     }
 

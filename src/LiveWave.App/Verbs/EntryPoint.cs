@@ -10,7 +10,7 @@ internal static class EntryPoint
     {
         try
         {
-            var parsed = CommandTree.Build(WatchVerb.Run).Parse(args);
+            var parsed = CommandTree.Build(WatchVerb.Run, SynthVerb.Run).Parse(args);
             return parsed.Errors.Count == 0 ? parsed.Invoke(OwnErrors()) : Refuse(parsed);
         }
         catch (RefusedException refused)

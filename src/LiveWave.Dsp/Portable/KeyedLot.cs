@@ -27,11 +27,16 @@ public static class KeyedLot
     {
         ArgumentNullException.ThrowIfNull(sessionId);
         ArgumentNullException.ThrowIfNull(rule);
+        return (long)(Key(seed, sessionId, rule, onset) >> 11) * PowerOfTwo.Of(-53);
+    }
+
+    /// <summary>The 64 bits behind a lot.</summary>
+    internal static ulong Key(ulong seed, string first, string second, long number)
+    {
         var key = Mix(seed);
-        key = Mix(key ^ HashOf(sessionId));
-        key = Mix(key ^ HashOf(rule));
-        key = Mix(key ^ (ulong)onset);
-        return (long)(key >> 11) * PowerOfTwo.Of(-53);
+        key = Mix(key ^ HashOf(first));
+        key = Mix(key ^ HashOf(second));
+        return Mix(key ^ (ulong)number);
     }
 
     private static ulong HashOf(string text)

@@ -1,3 +1,5 @@
+using static LiveWave.Pipeline.KeyRows;
+
 namespace LiveWave.Pipeline;
 
 /// <content>Acting: rules, limits, outputs.</content>

@@ -1,3 +1,5 @@
+using static LiveWave.Pipeline.KeyRows;
+
 namespace LiveWave.Pipeline;
 
 /// <content>The run: session, stream, amplifier, cues, parts, budget, record.</content>

@@ -1,3 +1,5 @@
+using static LiveWave.Pipeline.KeyRows;
+
 namespace LiveWave.Pipeline;
 
 /// <content>The signal: patches, conditioning, bands with their estimators.</content>

@@ -13,11 +13,16 @@ public static class SheetReference
 
     /// <summary>The whole reference as plain text: a section for each table, in it a line for each key with what it takes, what counts
     /// where the sheet says nothing, and what it means.</summary>
-    public static string Text()
+    public static string Text() => Text(SheetKeys.Lookup);
+
+    /// <summary>The reference of any key table.</summary>
+    /// <param name="keys">The table.</param>
+    public static string Text(KeyTable keys)
     {
+        ArgumentNullException.ThrowIfNull(keys);
         var text = new StringBuilder();
         AppendRow(text, "key", "takes", "if absent", "meaning");
-        foreach (var key in SheetKeys.All)
+        foreach (var key in keys.All)
         {
             if (key.IsTable) AppendHeading(text, key);
             else AppendRow(text, "  " + key.Name, Takes(key), Usual(key), key.Meaning);

@@ -1,7 +1,7 @@
 namespace LiveWave.Pipeline;
 
 /// <summary>Holds a parsed sheet against the key table: keys unknown, not built or missing, types, ranges, words.</summary>
-internal sealed class SheetChecker(List<SheetFault> faults)
+internal sealed class SheetChecker(KeyTable keys, List<SheetFault> faults)
 {
     /// <summary>Checks a table and everything in it.</summary>
     /// <param name="parsed">As it was written.</param>
@@ -15,7 +15,7 @@ internal sealed class SheetChecker(List<SheetFault> faults)
             RefuseStrange(path, name, value);
         }
 
-        foreach (var key in SheetKeys.Under(path))
+        foreach (var key in keys.Under(path))
         {
             if (!key.IsBuilt) continue;
             var content = parsed.Entries.TryGetValue(key.Name, out var value) ? Convert(key, value) : Absent(key, parsed.Line);
@@ -27,16 +27,16 @@ internal sealed class SheetChecker(List<SheetFault> faults)
 
     private void RefuseStrange(string tablePath, string name, ParsedValue value)
     {
-        var path = SheetKeys.Join(tablePath, SheetValues.Plain(name));
-        if (SheetKeys.Find(path) is { } key)
+        var path = KeyTable.Join(tablePath, SheetValues.Plain(name));
+        if (keys.Find(path) is { } key)
         {
             if (key.IsBuilt) return;
             faults.Add(new(value.Line, path, $"not yet built ({Uncapitalised(key.Meaning)})", "leave it out"));
             return;
         }
 
-        var own = SheetKeys.Under(tablePath).ToArray();
-        var elsewhere = SheetKeys.All.FirstOrDefault(k => k.Name == name);
+        var own = keys.Under(tablePath).ToArray();
+        var elsewhere = keys.All.FirstOrDefault(k => k.Name == name);
         var hint = Spelling.Hint(name, own.Select(k => k.Name));
         if (hint.Length == 0 && elsewhere is not null) hint = $"it belongs to {Home(elsewhere)}; ";
         var headings = own.Where(k => k.IsBuilt).Select(k => tablePath.Length == 0 ? k.Heading : k.Name);
@@ -55,7 +55,7 @@ internal sealed class SheetChecker(List<SheetFault> faults)
         if (key.Type != SheetKeyType.Table) return key.Default;
 
         // A table of defaults counts as written; one that has needed keys (limits) is there or it is not.
-        return SheetKeys.Under(key.Path).Any(k => k.IsRequired) ? null : Check(new ParsedTable(tableLine), key.Path);
+        return keys.Under(key.Path).Any(k => k.IsRequired) ? null : Check(new ParsedTable(tableLine), key.Path);
     }
 
     private object? Convert(SheetKey key, ParsedValue value) => (key.Type, value.Content) switch
@@ -149,7 +149,7 @@ internal sealed class SheetChecker(List<SheetFault> faults)
             }
 
             var what = isRight ? "its key is no name" : $"it is {value.Described}{SheetValues.Shown(content)}";
-            faults.Add(new(value.Line, SheetKeys.Join(key.Path, SheetValues.Plain(name)), what, Advice(key)));
+            faults.Add(new(value.Line, KeyTable.Join(key.Path, SheetValues.Plain(name)), what, Advice(key)));
         }
 
         return found.Count == entries.Entries.Count ? found : null;
@@ -163,8 +163,8 @@ internal sealed class SheetChecker(List<SheetFault> faults)
 
     private static string Advice(SheetKey key) => "give " + key.Takes;
 
-    private static string Home(SheetKey key) =>
-        key.TablePath.Length == 0 ? $"the sheet itself, as {key.Heading}" : SheetKeys.Find(key.TablePath)?.Heading ?? key.TablePath;
+    private string Home(SheetKey key) =>
+        key.TablePath.Length == 0 ? $"the {keys.FileWord} itself, as {key.Heading}" : keys.Find(key.TablePath)?.Heading ?? key.TablePath;
 
     private static string Uncapitalised(string meaning) => char.ToLowerInvariant(meaning[0]) + meaning[1..];
 }

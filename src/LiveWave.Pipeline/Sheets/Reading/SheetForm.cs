@@ -17,7 +17,7 @@ public static class SheetForm
         ArgumentNullException.ThrowIfNull(parsed);
         ArgumentNullException.ThrowIfNull(file);
         var found = new List<SheetFault>();
-        var table = new SheetChecker(found).Check(parsed, path: "");
+        var table = new SheetChecker(SheetKeys.Lookup, found).Check(parsed, path: "");
         new SheetCrossChecks(found).Check(table);
         sheet = found.Count == 0 ? new SheetBuilder(file).Build(table) : null;
         faults = [.. found.OrderBy(fault => fault.Line)];
