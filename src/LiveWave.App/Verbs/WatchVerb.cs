@@ -36,12 +36,14 @@ internal static class WatchVerb
         using var tally = new RunTally(wiring.Surface);
         using var recorder = new SessionRecorder(folder, wiring.Surface, wiring.Board);
         using var thread = new DecisionThread(wiring.Loop, wiring.Gate);
+        using var view = options.HasView ? wiring.View() : null;   // before the guard: the terminal is given back before a crash is told
         using var guard = new RunGuard(wiring.Gate, folder, thread.Stop);
         foreach (var note in wiring.Notes) wiring.Board.Post(note.Level, note.Where, note.What, note.Advice);
         var collections = GC.CollectionCount(0);
         var pause = GC.GetTotalPauseDuration();
         thread.Start();
-        using (var progress = new ProgressLine(wiring.Loop, isShown: !options.Json))
+        view?.Start();
+        using (var progress = new ProgressLine(wiring.Loop, isShown: !options.Json && view is null))
         {
             while (!thread.Wait(Turn)) progress.Show();
         }
@@ -50,6 +52,7 @@ internal static class WatchVerb
         wiring.EndGate();
         foreach (var warning in wiring.FeedWarnings()) wiring.Board.Post(warning.Level, warning.Where, warning.What, warning.Advice);
         wiring.Loop.DrainAll();
+        view?.Dispose();
         wiring.Surface.Complete();
         LatencyFiles.Write(folder, wiring.Ledger, began, WallClock.Time.GetLocalNow());
         if (thread.Failure is { } failure)

@@ -1,0 +1,111 @@
+using LiveWave.Abstractions;
+
+namespace LiveWave.Display;
+
+/// <summary>The rose: directions of the last minute's waves, each petal in the colour of its direction, the rule's sector on the rim.</summary>
+internal static class RosePanel
+{
+    private const int Petals = 16;
+    private const double PetalDegrees = 360.0 / Petals;
+
+    public static void Draw(CellGrid grid, Region region, SessionPicture picture)
+    {
+        var x = grid.Write(region.X, region.Y, region.Columns, "ROSE ", Slate.Strong, CellStyle.Bold);
+        grid.Write(x, region.Y, region.Columns - 5, "directions of the last minute", Slate.Text);
+        var rows = region.Rows - 1;
+        var dots = new DotCanvas(2 * rows, rows);
+        Span<int> counts = stackalloc int[Petals];
+        var (waves, wanted) = Count(picture, counts);
+        Fill(dots, counts, picture.Facts);
+        for (var row = 0; row < rows; row++)
+        {
+            for (var column = 0; column < dots.Columns; column++)
+            {
+                var glyph = dots.Glyph(column, row);
+                if (glyph != ' ') grid.Put(region.X + column, region.Y + 1 + row, glyph, Ink(dots, column, row, counts));
+            }
+        }
+
+        Needle(grid, region, dots, picture);
+        Notes(grid, new Region(region.X + dots.Columns + 2, region.Y + 1, region.Columns - dots.Columns - 2, rows), picture, waves, wanted);
+    }
+
+    private static (int Waves, int Wanted) Count(SessionPicture picture, Span<int> counts)
+    {
+        var (waves, wanted) = (0, 0);
+        for (var back = 0; back < picture.Events.Count; back++)
+        {
+            ref readonly var wave = ref picture.Events[back];
+            if (wave.Passed.StampSeconds < picture.NewestSeconds - SessionPicture.RoseSeconds) break;
+            if (double.IsNaN(wave.DirectionDegrees)) continue;
+            counts[PetalOf(wave.DirectionDegrees)]++;
+            waves++;
+            if (picture.Facts.IsWanted(wave.DirectionDegrees)) wanted++;
+        }
+
+        return (waves, wanted);
+    }
+
+    private static void Fill(DotCanvas dots, ReadOnlySpan<int> counts, ViewFacts facts)
+    {
+        var most = 1;
+        foreach (var count in counts) most = Math.Max(most, count);
+        for (var y = 0; y < dots.Height; y++)
+        {
+            for (var x = 0; x < dots.Width; x++)
+            {
+                var (radius, degrees) = Polar(dots, x, y);
+                var isRim = radius is > 0.93 and <= 1.0;
+                var isFarRim = radius > 0.86 && radius <= 1.0;
+
+                // Areas, not lengths, are what an eye compares: the radius is the root of the count.
+                var isPetal = radius <= 0.82 * Math.Sqrt(counts[PetalOf(degrees)] / (double)most);
+                if (isPetal || (isFarRim && facts.Rules.Count > 0 && facts.IsWanted(degrees)) || (isRim && (x + y) % 3 == 0)) dots.Set(x, y);
+            }
+        }
+    }
+
+    private static Colour Ink(DotCanvas dots, int column, int row, ReadOnlySpan<int> counts)
+    {
+        var (radius, degrees) = Polar(dots, (2 * column) + 0.5, (4 * row) + 1.5);
+        return radius < 0.84 && counts[PetalOf(degrees)] > 0 ? CyclicMap.AtDegrees(PetalOf(degrees) * PetalDegrees) : Slate.Text;
+    }
+
+    /// <summary>Where the newest frame points while a wave passes: an arrow on the rim.</summary>
+    private static void Needle(CellGrid grid, Region region, DotCanvas dots, SessionPicture picture)
+    {
+        var degrees = picture.Newest.DirectionDegrees;
+        if (!picture.IsPassing || double.IsNaN(degrees)) return;
+        var (cosine, sine) = (Math.Cos(degrees * Math.PI / 180), Math.Sin(degrees * Math.PI / 180));
+        var column = (int)Math.Clamp(0.5 * dots.Columns * (1 + (0.9 * cosine)), 0, dots.Columns - 1);
+        var row = (int)Math.Clamp(0.5 * dots.Rows * (1 - (0.9 * sine)), 0, dots.Rows - 1);
+        grid.Put(region.X + column, region.Y + 1 + row, Words.Arrow(degrees), Slate.Strong, CellStyle.Bold);
+    }
+
+    private static void Notes(CellGrid grid, Region region, SessionPicture picture, int waves, int wanted)
+    {
+        var lines = new List<string> { $"{waves} waves, {wanted} wanted" };
+        foreach (var rule in picture.Facts.Rules)
+        {
+            lines.Add($"rule {rule.Name}");
+            lines.Add(double.IsNaN(rule.DirectionDegrees)
+                ? "  any direction"
+                : $"  {Words.Arrow(rule.DirectionDegrees)} {Words.Degrees(rule.DirectionDegrees)} ± {rule.ToleranceDegrees:0}°, on the rim");
+        }
+
+        lines.Add($"{picture.CountOf(DecisionKind.Pulse)} pulses {picture.CountOf(DecisionKind.Sham)} shams {picture.CountOf(DecisionKind.Hold)} holds");
+        foreach (var axis in picture.Facts.Patch.Layout.Axes) lines.Add($"{Words.Arrow(axis.Degrees)} {axis.Name}");
+        for (var i = 0; i < Math.Min(lines.Count, region.Rows); i++)
+        {
+            grid.Write(region.X, region.Y + i, region.Columns, lines[i], i == 0 ? Slate.Text : Slate.Faint);
+        }
+    }
+
+    private static (double Radius, double Degrees) Polar(DotCanvas dots, double x, double y)
+    {
+        var (right, up) = (((x + 0.5) / dots.Width * 2) - 1, 1 - ((y + 0.5) / dots.Height * 2));
+        return (Math.Sqrt((right * right) + (up * up)), Math.Atan2(up, right) * (180 / Math.PI));
+    }
+
+    private static int PetalOf(double degrees) => (int)Math.Round(degrees / PetalDegrees) & (Petals - 1);
+}
