@@ -52,13 +52,16 @@ internal sealed class WatchWiring : IDisposable
     public static WatchWiring Make(SessionSheet sheet, RecordingFeed recording, double firstStampSeconds, WatchOptions options)
     {
         var stopwatch = new RealClock();
-        IClock clock = options.IsRealClock ? new RealClock(firstStampSeconds) : new VirtualClock(firstStampSeconds);
         var catalog = BuiltInParts.Catalog();
         var patches = sheet.Patches.Select(patch => PatchReader.Read(sheet, patch, recording.Format)).ToList();
         var calibrations = CalibrationChoice.Make(sheet, patches, recording.Format);
         var sessionId = options.SessionId ?? NewSessionId(sheet);
-        var setup = new RunSetupBuilder(sheet, recording.Format, catalog, clock).Build(patches, calibrations.Of, sessionId);
-        var warmup = Pipeline.Warmup.Run(setup, stopwatch);
+        RunSetup SetupOn(IClock on) => new RunSetupBuilder(sheet, recording.Format, catalog, on).Build(patches, calibrations.Of, sessionId);
+        var warmup = Pipeline.Warmup.Run(SetupOn(stopwatch), stopwatch);
+
+        // After the warm-up: a recording played at its own pace begins now, not seconds ago.
+        IClock clock = options.IsRealClock ? new RealClock(firstStampSeconds) : new VirtualClock(firstStampSeconds);
+        var setup = SetupOn(clock);
         var board = new StatusBoard(clock);
         var surface = new RunSurface(board);
         var gate = new PulseGate(Outputs(sheet, catalog, clock), clock, Limits(sheet));

@@ -8,6 +8,7 @@ namespace LiveWave.Display;
 internal sealed class ArrayMap
 {
     private const double CellAspect = 2;
+    private const double Rounding = 1e-6;   // positions are sums of decimals
     private readonly List<int>[] _electrodes;
 
     /// <summary>Places electrodes.</summary>
@@ -21,8 +22,8 @@ internal sealed class ArrayMap
         var (across, down) = ((x.Max() - x.Min()) / pitch, (y.Max() - y.Min()) / pitch);
         var rowsPerPitch = Whole(Math.Min(rows / (down + 1), columns / (CellAspect * (across + 1))));
         var columnsPerPitch = CellAspect * rowsPerPitch;
-        Columns = Math.Clamp((int)Math.Ceiling((across + 1) * columnsPerPitch - 1e-9), 1, columns);
-        Rows = Math.Clamp((int)Math.Ceiling((down + 1) * rowsPerPitch - 1e-9), 1, rows);
+        Columns = Math.Clamp((int)Math.Ceiling((across + 1) * columnsPerPitch - Rounding), 1, columns);
+        Rows = Math.Clamp((int)Math.Ceiling((down + 1) * rowsPerPitch - Rounding), 1, rows);
         _electrodes = new List<int>[Columns * Rows];
         for (var i = 0; i < _electrodes.Length; i++) _electrodes[i] = [];
         for (var i = 0; i < x.Length; i++)
@@ -53,7 +54,7 @@ internal sealed class ArrayMap
     }
 
     // Whole cells per electrode look alike all over the array; below one cell there is nothing to round.
-    private static double Whole(double rowsPerPitch) => rowsPerPitch >= 1 ? Math.Floor(rowsPerPitch) : rowsPerPitch;
+    private static double Whole(double rowsPerPitch) => rowsPerPitch >= 1 - Rounding ? Math.Floor(rowsPerPitch + Rounding) : rowsPerPitch;
 
     private static (double[] X, double[] Y) Turned(Layout layout)
     {

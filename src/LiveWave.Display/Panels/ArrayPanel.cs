@@ -8,13 +8,13 @@ namespace LiveWave.Display;
 internal sealed class ArrayPanel
 {
     private const string Fill = " ░▒▓█";
-    private const double GroundShare = 0.45;
-    private const double LeastInkShare = 0.55;
+    private const double GroundShare = 0.3;
+    private const double LeastInkShare = 0.5;
     private const double CrestCosine = 0.9;
     private const double CrestAmplitude = 0.35;
     private const double CrestGlow = 0.45;
     private const int AmplitudeSteps = 8;   // fewer looks, fewer bytes on a slow line
-    private const int WheelCells = 12;
+    private const int WheelCells = 8;
 
     private ArrayMap? _map;
     private (int Columns, int Rows) _size;
@@ -41,8 +41,8 @@ internal sealed class ArrayPanel
 
     private static void Header(CellGrid grid, Region region, ViewFacts facts)
     {
-        const string Left = "−180° ";
-        const string Right = " 180°";
+        const string Left = "−180";
+        const string Right = "180";
         var wheel = Left.Length + WheelCells + Right.Length;
         var x = grid.Write(region.X, region.Y, 6, "ARRAY ", Slate.Strong, CellStyle.Bold);
         grid.Write(x, region.Y, region.Columns - 6 - wheel - 1, $"{facts.Patch.Name} · {facts.Band.Name}", Slate.Text);

@@ -6,7 +6,7 @@ namespace LiveWave.Display;
 internal static class BudgetPanel
 {
     private const int NameColumns = 20;
-    private const int NumberColumns = 8;
+    private const int NumberColumns = 7;
     private const int TableColumns = NameColumns + (3 * NumberColumns);
     private const int BarColumns = 16;
 

@@ -8,7 +8,7 @@ internal static class LossPanel
         var run = picture.Run;
         var missed = picture.Missed == 0 ? "" : $"  view missed {picture.Missed}";
         var x = grid.Write(region.X, region.Y, region.Columns, "LOST ", Slate.Strong, CellStyle.Bold);
-        var text = $"{run.LostRows} of {run.Rows + run.LostRows} rows in {run.Gaps} gaps  blanked {run.BlankedRows}{missed}";
+        var text = $"{run.LostRows} of {run.Rows + run.LostRows} rows in {Words.Count(run.Gaps, "gap")}  blanked {run.BlankedRows}{missed}";
         grid.Write(x, region.Y, region.X + region.Columns - x, text, run.LostRows + picture.Missed > 0 ? Slate.Strong : Slate.Faint);
     }
 }

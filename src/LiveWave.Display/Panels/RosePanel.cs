@@ -1,4 +1,5 @@
 using LiveWave.Abstractions;
+using LiveWave.Pipeline;
 
 namespace LiveWave.Display;
 
@@ -55,11 +56,11 @@ internal static class RosePanel
             for (var x = 0; x < dots.Width; x++)
             {
                 var (radius, degrees) = Polar(dots, x, y);
-                var isRim = radius is > 0.93 and <= 1.0;
-                var isFarRim = radius > 0.86 && radius <= 1.0;
+                var isRim = radius is > 0.94 and <= 1.0;
+                var isFarRim = radius > 0.9 && radius <= 1.0;
 
                 // Areas, not lengths, are what an eye compares: the radius is the root of the count.
-                var isPetal = radius <= 0.82 * Math.Sqrt(counts[PetalOf(degrees)] / (double)most);
+                var isPetal = radius <= 0.86 * Math.Sqrt(counts[PetalOf(degrees)] / (double)most);
                 if (isPetal || (isFarRim && facts.Rules.Count > 0 && facts.IsWanted(degrees)) || (isRim && (x + y) % 3 == 0)) dots.Set(x, y);
             }
         }
@@ -68,7 +69,7 @@ internal static class RosePanel
     private static Colour Ink(DotCanvas dots, int column, int row, ReadOnlySpan<int> counts)
     {
         var (radius, degrees) = Polar(dots, (2 * column) + 0.5, (4 * row) + 1.5);
-        return radius < 0.84 && counts[PetalOf(degrees)] > 0 ? CyclicMap.AtDegrees(PetalOf(degrees) * PetalDegrees) : Slate.Text;
+        return radius < 0.88 && counts[PetalOf(degrees)] > 0 ? CyclicMap.AtDegrees(PetalOf(degrees) * PetalDegrees) : Slate.Text;
     }
 
     /// <summary>Where the newest frame points while a wave passes: an arrow on the rim.</summary>
@@ -84,7 +85,7 @@ internal static class RosePanel
 
     private static void Notes(CellGrid grid, Region region, SessionPicture picture, int waves, int wanted)
     {
-        var lines = new List<string> { $"{waves} waves, {wanted} wanted" };
+        var lines = new List<string> { $"{Words.Count(waves, "wave")}, {wanted} wanted" };
         foreach (var rule in picture.Facts.Rules)
         {
             lines.Add($"rule {rule.Name}");
@@ -93,13 +94,15 @@ internal static class RosePanel
                 : $"  {Words.Arrow(rule.DirectionDegrees)} {Words.Degrees(rule.DirectionDegrees)} ± {rule.ToleranceDegrees:0}°, on the rim");
         }
 
-        lines.Add($"{picture.CountOf(DecisionKind.Pulse)} pulses {picture.CountOf(DecisionKind.Sham)} shams {picture.CountOf(DecisionKind.Hold)} holds");
+        lines.Add($"{Count(picture, DecisionKind.Pulse)}, {Count(picture, DecisionKind.Sham)}, {Count(picture, DecisionKind.Hold)}");
         foreach (var axis in picture.Facts.Patch.Layout.Axes) lines.Add($"{Words.Arrow(axis.Degrees)} {axis.Name}");
         for (var i = 0; i < Math.Min(lines.Count, region.Rows); i++)
         {
             grid.Write(region.X, region.Y + i, region.Columns, lines[i], i == 0 ? Slate.Text : Slate.Faint);
         }
     }
+
+    private static string Count(SessionPicture picture, DecisionKind kind) => Words.Count(picture.CountOf(kind), DecisionWords.What(kind));
 
     private static (double Radius, double Degrees) Polar(DotCanvas dots, double x, double y)
     {

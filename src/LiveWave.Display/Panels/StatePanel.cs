@@ -45,7 +45,7 @@ internal static class StatePanel
     private static string Rest(SessionPicture picture, bool isWide)
     {
         var run = picture.Run;
-        var lost = isWide ? $"lost {run.LostRows} rows in {run.Gaps} gaps" : $"lost {run.LostRows} rows";
+        var lost = isWide ? $"lost {Words.Count(run.LostRows, "row")} in {Words.Count(run.Gaps, "gap")}" : $"lost {Words.Count(run.LostRows, "row")}";
         var used = picture.Facts.PulsesAllowed is { } allowed ? $"{picture.Gate.PulsesUsed} of {allowed}" : $"{picture.Gate.PulsesUsed}";
         return $"  {lost}  {picture.Facts.CalibrationWord}  {(isWide ? "pulses used" : "used")} {used}";
     }

@@ -16,6 +16,9 @@ internal static class Words
     public static string Degrees(double degrees) =>
         double.IsNaN(degrees) ? "n/a" : $"{Math.Round(((degrees % 360) + 360) % 360) % 360:0}°";
 
+    /// <summary>A count with its word, in the plural where it is one.</summary>
+    public static string Count(long count, string word) => count == 1 ? $"1 {word}" : $"{count} {word}s";
+
     public static string Milliseconds(double ms) => double.IsNaN(ms) ? "n/a" : ms < 100 ? $"{ms:0.000}" : $"{ms:0.0}";
 
     /// <summary>A decision and what became of it, or why there was none.</summary>

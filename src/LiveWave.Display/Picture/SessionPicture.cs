@@ -53,7 +53,7 @@ internal sealed class SessionPicture
 
     public RunGlance Run { get; private set; }
 
-    public GateGlance Gate { get; set; }
+    public GateGlance Gate { get; set; } = new(GateState.Disarmed, 0, "");
 
     /// <summary>What came faster than the view looked, and was not kept.</summary>
     public long Missed { get; set; }
