@@ -16,8 +16,12 @@ internal sealed class ArrayPanel
     private const int AmplitudeSteps = 8;   // fewer looks, fewer bytes on a slow line
     private const int WheelCells = 8;
 
+    private readonly bool _hasShades;
     private ArrayMap? _map;
     private (int Columns, int Rows) _size;
+
+    /// <param name="depth">The colours it will be shown in: among 256 a dimmed hue is another hue or a grey, so there the fill alone tells.</param>
+    public ArrayPanel(ColourDepth depth) => _hasShades = depth == ColourDepth.Full;
 
     public void Draw(CellGrid grid, Region region, SessionPicture picture)
     {
@@ -39,7 +43,7 @@ internal sealed class ArrayPanel
         }
     }
 
-    private static void Header(CellGrid grid, Region region, ViewFacts facts)
+    private void Header(CellGrid grid, Region region, ViewFacts facts)
     {
         const string Left = "−180";
         const string Right = "180";
@@ -56,7 +60,7 @@ internal sealed class ArrayPanel
         grid.Write(x + WheelCells, region.Y, Right.Length, Right, Slate.Faint);
     }
 
-    private static Cell CellOf(IReadOnlyList<int> electrodes, SessionPicture picture)
+    private Cell CellOf(IReadOnlyList<int> electrodes, SessionPicture picture)
     {
         var (re, im, count, validity) = (0.0, 0.0, 0, Validity.Invalid);
         var isUsed = false;
@@ -80,13 +84,13 @@ internal sealed class ArrayPanel
         return validity == Validity.Observed ? cell : cell with { Glyph = '~' };
     }
 
-    private static Cell Look(double cosine, double sine, double amplitude)
+    private Cell Look(double cosine, double sine, double amplitude)
     {
         var hue = CyclicMap.AtRadians(Math.Atan2(sine, cosine));
         var fill = 0.5 * (1 + cosine) * amplitude;
         var glyph = Fill[Math.Min((int)(fill * Fill.Length), Fill.Length - 1)];
-        var ink = Colour.Mix(Slate.Ground, hue, LeastInkShare + ((1 - LeastInkShare) * amplitude));
+        var ink = !_hasShades ? hue : Colour.Mix(Slate.Ground, hue, LeastInkShare + ((1 - LeastInkShare) * amplitude));
         if (cosine > CrestCosine && amplitude > CrestAmplitude) ink = Colour.Mix(ink, Slate.Strong, CrestGlow);
-        return new Cell(glyph, ink, Colour.Mix(Slate.Ground, hue, GroundShare * amplitude) with { Basic = Colour.TerminalsOwn });
+        return new Cell(glyph, ink, _hasShades ? Colour.Mix(Slate.Ground, hue, GroundShare * amplitude) : Slate.Ground);
     }
 }

@@ -7,6 +7,7 @@ namespace LiveWave.Display;
 internal static class RosePanel
 {
     private const int Petals = 16;
+    private const sbyte None = -1;
     private const double PetalDegrees = 360.0 / Petals;
 
     public static void Draw(CellGrid grid, Region region, SessionPicture picture)
@@ -17,13 +18,17 @@ internal static class RosePanel
         var dots = new DotCanvas(2 * rows, rows);
         Span<int> counts = stackalloc int[Petals];
         var (waves, wanted) = Count(picture, counts);
-        Fill(dots, counts, picture.Facts);
+        Span<sbyte> petals = stackalloc sbyte[dots.Columns * dots.Rows];
+        petals.Fill(None);
+        Fill(dots, counts, petals, picture.Facts);
         for (var row = 0; row < rows; row++)
         {
             for (var column = 0; column < dots.Columns; column++)
             {
                 var glyph = dots.Glyph(column, row);
-                if (glyph != ' ') grid.Put(region.X + column, region.Y + 1 + row, glyph, Ink(dots, column, row, counts));
+                var petal = petals[(row * dots.Columns) + column];
+                var ink = petal == None ? Slate.Text : CyclicMap.AtDegrees(petal * PetalDegrees);
+                if (glyph != ' ') grid.Put(region.X + column, region.Y + 1 + row, glyph, ink);
             }
         }
 
@@ -47,7 +52,8 @@ internal static class RosePanel
         return (waves, wanted);
     }
 
-    private static void Fill(DotCanvas dots, ReadOnlySpan<int> counts, ViewFacts facts)
+    /// <summary>Sets the dots, and notes for each cell which petal is in it, if one is.</summary>
+    private static void Fill(DotCanvas dots, ReadOnlySpan<int> counts, Span<sbyte> petals, ViewFacts facts)
     {
         var most = 1;
         foreach (var count in counts) most = Math.Max(most, count);
@@ -60,16 +66,12 @@ internal static class RosePanel
                 var isFarRim = radius > 0.9 && radius <= 1.0;
 
                 // Areas, not lengths, are what an eye compares: the radius is the root of the count.
-                var isPetal = radius <= 0.86 * Math.Sqrt(counts[PetalOf(degrees)] / (double)most);
+                var petal = PetalOf(degrees);
+                var isPetal = radius <= 0.86 * Math.Sqrt(counts[petal] / (double)most);
+                if (isPetal) petals[(y / 4 * dots.Columns) + (x / 2)] = (sbyte)petal;
                 if (isPetal || (isFarRim && facts.Rules.Count > 0 && facts.IsWanted(degrees)) || (isRim && (x + y) % 3 == 0)) dots.Set(x, y);
             }
         }
-    }
-
-    private static Colour Ink(DotCanvas dots, int column, int row, ReadOnlySpan<int> counts)
-    {
-        var (radius, degrees) = Polar(dots, (2 * column) + 0.5, (4 * row) + 1.5);
-        return radius < 0.88 && counts[PetalOf(degrees)] > 0 ? CyclicMap.AtDegrees(PetalOf(degrees) * PetalDegrees) : Slate.Text;
     }
 
     /// <summary>Where the newest frame points while a wave passes: an arrow on the rim.</summary>

@@ -15,7 +15,11 @@ internal sealed class Screen
     private const int TallRows = 36;
     private const int MostRoseRows = 13;
     private const int Gutter = 2;
-    private readonly ArrayPanel _array = new();
+    private readonly ArrayPanel _array;
+
+    /// <summary>Makes a screen.</summary>
+    /// <param name="depth">The colours it will be shown in.</param>
+    public Screen(ColourDepth depth) => _array = new ArrayPanel(depth);
 
     /// <summary>Draws everything.</summary>
     /// <param name="grid">Cleared, then drawn on.</param>

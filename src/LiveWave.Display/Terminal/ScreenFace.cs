@@ -10,7 +10,7 @@ internal sealed class ScreenFace : IFace
 
     private readonly ITerminal _terminal;
     private readonly DifferenceWriter _writer;
-    private readonly Screen _screen = new();
+    private readonly Screen _screen;
     private readonly CellGrid _grid = new(0, 0);
     private int _frames;
 
@@ -18,6 +18,7 @@ internal sealed class ScreenFace : IFace
     {
         _terminal = terminal;
         _writer = new DifferenceWriter(terminal.Colours);
+        _screen = new Screen(terminal.Colours);
     }
 
     public void Show(SessionPicture picture)

@@ -109,7 +109,7 @@ public sealed class ScreenTests
     private static CellGrid Drawn(int columns, int rows, SessionPicture picture)
     {
         var grid = new CellGrid(columns, rows);
-        new Screen().Draw(grid, picture);
+        new Screen(ColourDepth.Full).Draw(grid, picture);
         return grid;
     }
 }
