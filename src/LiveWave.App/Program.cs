@@ -1,1 +1,1 @@
-return LiveWave.App.EntryPoint.Run(args);
+return LiveWave.App.EntryPoint.Run(args, isTerminal: !Console.IsOutputRedirected);

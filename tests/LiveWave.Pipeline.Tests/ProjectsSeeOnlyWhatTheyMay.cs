@@ -11,7 +11,8 @@ public sealed class ProjectsSeeOnlyWhatTheyMay
         ["LiveWave.Dsp"] = ["LiveWave.Abstractions"],
         ["LiveWave.Pipeline"] = ["LiveWave.Abstractions", "LiveWave.Dsp"],
         ["LiveWave.Recordings"] = ["LiveWave.Abstractions"],
-        ["LiveWave.App"] = ["LiveWave.Abstractions", "LiveWave.Dsp", "LiveWave.Pipeline", "LiveWave.Recordings"],
+        ["LiveWave.Display"] = ["LiveWave.Abstractions", "LiveWave.Pipeline"],
+        ["LiveWave.App"] = ["LiveWave.Abstractions", "LiveWave.Display", "LiveWave.Dsp", "LiveWave.Pipeline", "LiveWave.Recordings"],
     };
 
     [Fact]

@@ -8,21 +8,21 @@ internal static class CommandTree
 {
     private const string DemoSessionId = "millrace-demo";
 
-    public static RootCommand Build(Func<WatchOptions, int> watch, Func<SynthOptions, int> synth)
+    public static RootCommand Build(Func<WatchOptions, int> watch, Func<SynthOptions, int> synth, bool isTerminal = false)
     {
         var root = new RootCommand(
             "LiveWave watches travelling waves on electrode arrays while they pass, decides by rule, and rehearses pulses. "
             + "For research; not a medical device. Exit codes: 0 done, 1 the answer is no, 2 the request or its input was wrong, "
             + "3 the machine or rig failed.");
-        root.Subcommands.Add(Demo(watch));
-        root.Subcommands.Add(Watch(watch));
+        root.Subcommands.Add(Demo(watch, isTerminal));
+        root.Subcommands.Add(Watch(watch, isTerminal));
         root.Subcommands.Add(Synth(synth));
         return root;
     }
 
-    private static Command Demo(Func<WatchOptions, int> watch)
+    private static Command Demo(Func<WatchOptions, int> watch, bool isTerminal)
     {
-        var common = new CommonOptions();
+        var common = new CommonOptions(isTerminal);
         var command = new Command("demo", "Plays the bundled recording: waves, decisions, rehearsed pulses, comparison with the truth. No hardware, no network.");
         common.AddTo(command);
         command.SetAction(parsed => watch(common.Read(parsed, "demo", BundledSheet(), from: null) with
@@ -32,9 +32,9 @@ internal static class CommandTree
         return command;
     }
 
-    private static Command Watch(Func<WatchOptions, int> watch)
+    private static Command Watch(Func<WatchOptions, int> watch, bool isTerminal)
     {
-        var common = new CommonOptions();
+        var common = new CommonOptions(isTerminal);
         var sheet = new Argument<string?>("SHEET") { Description = "The session sheet, a TOML file.", Arity = ArgumentArity.ZeroOrOne };
         var keys = new Option<bool>("--keys") { Description = "Print every key of a sheet with its unit, default and range, and end." };
         var from = new Option<string?>("--from") { Description = "A recording to play; the sheet's own [stream] file if not given.", HelpName = "FILE" };

@@ -14,10 +14,10 @@ internal sealed class CommonOptions
         HelpName = "N",
     };
 
-    private readonly Option<string> _clock = new("--clock")
+    private readonly Option<string?> _clock = new("--clock")
     {
-        Description = "'real' plays at the pace of the recording, 'fast' as fast as it can be judged. Decisions are the same.",
-        DefaultValueFactory = _ => "fast",
+        Description = "'real' plays at the pace of the recording, 'fast' as fast as it can be judged. Decisions are the same. "
+            + "'fast' if not given, 'real' with --view terminal.",
     };
 
     private readonly Option<int> _blockRows = new("--block-rows")
@@ -35,16 +35,19 @@ internal sealed class CommonOptions
 
     private readonly Option<bool> _json = new("--json") { Description = "Print the summary as JSON." };
 
-    private readonly Option<string> _view = new("--view")
+    private readonly Option<string?> _view = new("--view")
     {
-        Description = "What to look at while it runs: 'none' so far.",
-        DefaultValueFactory = _ => "none",
+        Description = "What to look at while it runs: 'terminal' or 'none'. 'terminal' if not given, where the output is one and --clock is real.",
     };
 
-    public CommonOptions()
+    private readonly bool _isTerminal;
+
+    /// <param name="isTerminal">The output is a terminal: somebody may be looking.</param>
+    public CommonOptions(bool isTerminal)
     {
+        _isTerminal = isTerminal;
         _clock.AcceptOnlyFromAmong("real", "fast");
-        _view.AcceptOnlyFromAmong("none");
+        _view.AcceptOnlyFromAmong("terminal", "none");
         _out.Validators.Add(result =>
         {
             if (result.Tokens.Count > 0 && string.IsNullOrWhiteSpace(result.Tokens[0].Value)) result.AddError("--out needs a folder");
@@ -81,6 +84,10 @@ internal sealed class CommonOptions
 
     public void AddTo(Command command)
     {
+        command.Validators.Add(result =>
+        {
+            if (result.GetValue(_json) && result.GetValue(_view) == "terminal") result.AddError("--json and --view terminal do not go together");
+        });
         foreach (var option in (Option[])[_seconds, _clock, _blockRows, _out, _json, _view, SessionId]) command.Options.Add(option);
     }
 
@@ -90,10 +97,14 @@ internal sealed class CommonOptions
         SheetPath = sheet,
         From = from,
         Seconds = parsed.GetValue(_seconds) ?? double.NaN,
-        IsRealClock = parsed.GetValue(_clock) == "real",
+        IsRealClock = (parsed.GetValue(_clock) ?? (parsed.GetValue(_view) == "terminal" ? "real" : "fast")) == "real",
+        HasView = (parsed.GetValue(_view) ?? DefaultView(parsed)) == "terminal",
         BlockRows = parsed.GetValue(_blockRows),
         Out = parsed.GetValue(_out),
         Json = parsed.GetValue(_json),
         SessionId = parsed.GetValue(SessionId),
     };
+
+    private string DefaultView(ParseResult parsed) =>
+        _isTerminal && !parsed.GetValue(_json) && parsed.GetValue(_clock) == "real" ? "terminal" : "none";
 }

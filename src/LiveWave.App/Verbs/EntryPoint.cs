@@ -6,11 +6,13 @@ namespace LiveWave.App;
 /// <summary>From arguments to an exit code: what is wrong is said in lines for people, never as a stack trace.</summary>
 internal static class EntryPoint
 {
-    public static int Run(string[] args)
+    /// <param name="args">As given.</param>
+    /// <param name="isTerminal">The output is a terminal: somebody may be looking.</param>
+    public static int Run(string[] args, bool isTerminal = false)
     {
         try
         {
-            var parsed = CommandTree.Build(WatchVerb.Run, SynthVerb.Run).Parse(args);
+            var parsed = CommandTree.Build(WatchVerb.Run, SynthVerb.Run, isTerminal).Parse(args);
             return parsed.Errors.Count == 0 ? parsed.Invoke(OwnErrors()) : Refuse(parsed);
         }
         catch (RefusedException refused)

@@ -17,6 +17,9 @@ internal sealed record WatchOptions
     /// <summary>Paced by the recording's stamps; false: as fast as it can be judged.</summary>
     public bool IsRealClock { get; init; }
 
+    /// <summary>Shown on the terminal while it runs.</summary>
+    public bool HasView { get; init; }
+
     public int BlockRows { get; init; } = 10;
 
     /// <summary>The session folder; null: a new one in the sheet's record folder.</summary>

@@ -37,6 +37,7 @@ internal static class WatchVerb
         using var tally = new RunTally(wiring.Surface);
         using var recorder = new SessionRecorder(folder, wiring.Surface, wiring.Board);
         using var thread = new DecisionThread(wiring.Loop, wiring.Gate);
+        using var view = options.HasView ? wiring.View() : null;   // before the guard: the terminal is given back before a crash is told
         using var guard = new RunGuard(wiring.Gate, folder, thread.Stop);
         foreach (var note in wiring.NotesFor(options)) wiring.Board.Post(note.Level, note.Where, note.What, note.Advice);
         var collections = GC.CollectionCount(0);
@@ -45,7 +46,8 @@ internal static class WatchVerb
         try
         {
             thread.Start();
-            using var progress = new ProgressLine(wiring.Loop, isShown: !options.Json);
+            view?.Start();
+            using var progress = new ProgressLine(wiring.Loop, isShown: !options.Json && view is null);
             while (!thread.Wait(Turn)) progress.Show();
         }
         finally
@@ -56,6 +58,7 @@ internal static class WatchVerb
         wiring.Ledger.Process(GC.CollectionCount(0) - collections, GC.GetTotalPauseDuration() - pause);
         foreach (var warning in wiring.FeedWarnings()) wiring.Board.Post(warning.Level, warning.Where, warning.What, warning.Advice);
         wiring.Loop.DrainAll();
+        view?.Dispose();
         recorder.Dispose();       // writes the rest ...
         wiring.Loop.DrainAll();   // ... and what it could not write is told
         wiring.Surface.Complete();

@@ -1,5 +1,6 @@
 using System.Globalization;
 using LiveWave.Abstractions;
+using LiveWave.Display;
 using LiveWave.Pipeline;
 using LiveWave.Recordings;
 
@@ -45,6 +46,9 @@ internal sealed class WatchWiring : IDisposable
 
     public required StreamLoop Loop { get; init; }
 
+    /// <summary>Phasors for a view; empty where nobody looks.</summary>
+    public required IReadOnlyList<PhaseSnapshot> Phases { get; init; }
+
     /// <summary>What waiting for an instant lacks on this machine; empty where it lacks nothing.</summary>
     public required string Waiting { get; init; }
 
@@ -72,6 +76,7 @@ internal sealed class WatchWiring : IDisposable
         var surface = new RunSurface(board);
         var gate = new PulseGate(Outputs(sheet, catalog, clock), clock, Limits(sheet));
         var ledger = new LatencyLedger(Budget(sheet));
+        List<PhaseSnapshot> phases = options.HasView ? [.. setup.Tracks.Select(track => new PhaseSnapshot(setup.Patches[track.Patch].Channels.Count))] : [];
         var loop = new StreamLoop(setup, new RunParts
         {
             Feed = clock is VirtualClock steps ? new SteppedFeed(recording, steps, gate) : new PacedFeed(recording, clock),
@@ -82,6 +87,7 @@ internal sealed class WatchWiring : IDisposable
             Board = board,
             Ledger = ledger,
             BlockRows = options.BlockRows,
+            Watched = phases,
             RowLimit = double.IsNaN(options.Seconds) ? long.MaxValue : (long)Math.Round(options.Seconds * recording.Format.NominalRateHz),
         });
         return new WatchWiring(sheet, recording)
@@ -96,9 +102,25 @@ internal sealed class WatchWiring : IDisposable
             Board = board,
             Ledger = ledger,
             Loop = loop,
+            Phases = phases,
             Waiting = stopwatch.Lacks,
         };
     }
+
+    /// <summary>A view on the terminal.</summary>
+    public TerminalView View() => new(
+        Surface,
+        new ViewParts
+        {
+            Setup = Setup,
+            Loop = Loop,
+            Ledger = Ledger,
+            Limits = Budget(_sheet),
+            Gate = Gate,
+            Phases = Phases,
+            Calibration = Calibrations.Files.Count > 0 ? "calibrated" : "not calibrated",
+        },
+        new ConsoleTerminal());
 
     /// <summary>Writes what is known before the first block.</summary>
     public void WriteDocuments(SessionFolder folder, WatchOptions options, string recording, DateTimeOffset began)

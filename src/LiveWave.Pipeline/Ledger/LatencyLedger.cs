@@ -53,9 +53,16 @@ public sealed class LatencyLedger
         PauseMs = pause.TotalMilliseconds;
     }
 
+    /// <summary>Computing time of the newest block, seconds; NaN before the first. For observers on the decision thread.</summary>
+    public double NewestBlockSeconds { get; private set; } = double.NaN;
+
     /// <summary>A block was judged.</summary>
     /// <param name="seconds">Computing time.</param>
-    public void Block(double seconds) => _block.Record(seconds);
+    public void Block(double seconds)
+    {
+        NewestBlockSeconds = seconds;
+        _block.Record(seconds);
+    }
 
     /// <summary>A decision was taken.</summary>
     /// <param name="stages">When it passed each stage so far, and when it is due.</param>

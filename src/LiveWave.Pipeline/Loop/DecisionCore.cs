@@ -23,8 +23,9 @@ public sealed class DecisionCore
     /// <summary>Makes and prepares every part.</summary>
     /// <param name="setup">What the run is made of.</param>
     /// <param name="onFault">Hears of an estimator that failed: where, and the error.</param>
+    /// <param name="watched">Where frames' phasors are shown, one per track of the setup; none by default. Written, never read.</param>
     /// <exception cref="RefusedException">A part can't run with this stream, layout or calibration.</exception>
-    public DecisionCore(RunSetup setup, Action<string, Exception> onFault)
+    public DecisionCore(RunSetup setup, Action<string, Exception> onFault, IReadOnlyList<PhaseSnapshot>? watched = null)
     {
         ArgumentNullException.ThrowIfNull(setup);
         ArgumentNullException.ThrowIfNull(onFault);
@@ -32,7 +33,10 @@ public sealed class DecisionCore
         _conditioning = new ConditioningChain([.. setup.Conditioners.Select(make => make())], setup.Format);
         _blanking = new BlankingMark((int)Math.Ceiling(setup.BlankAfterPulseMs * rateHz / 1000));
         var indexStep = Math.Max(1, (long)Math.Round(rateHz / _conditioning.Output.NominalRateHz));
-        _patches = [.. setup.Patches.Select((patch, number) => new PatchTrack(patch, number, setup, _conditioning.Output, indexStep, onFault))];
+        _patches =
+        [
+            .. setup.Patches.Select((patch, number) => new PatchTrack(patch, number, setup, _conditioning.Output, indexStep, onFault, watched ?? [])),
+        ];
         _bands = [.. setup.Tracks.Select((track, at) => _patches[track.Patch].BandOf(at))];
         _waves = [.. _bands.SelectMany(band => band.Waves)];
         _rules = [.. setup.Rules.Select(rule => new RuleJudge(rule, rateHz, setup.Seed, setup.SessionId))];

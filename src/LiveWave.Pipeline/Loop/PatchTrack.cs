@@ -10,13 +10,20 @@ public sealed class PatchTrack
     private readonly PhaseTrack[] _bands;
     private readonly int[] _trackNumbers;
 
-    internal PatchTrack(PatchSetup patch, int number, RunSetup setup, StreamFormat conditioned, long indexStep, Action<string, Exception> onFault)
+    internal PatchTrack(
+        PatchSetup patch,
+        int number,
+        RunSetup setup,
+        StreamFormat conditioned,
+        long indexStep,
+        Action<string, Exception> onFault,
+        IReadOnlyList<PhaseSnapshot> watched)
     {
         _channels = [.. patch.Channels];
         _row = new double[_channels.Length];
         var format = conditioned.Select(_channels);
         _trackNumbers = [.. Enumerable.Range(0, setup.Tracks.Count).Where(at => setup.Tracks[at].Patch == number)];
-        _bands = [.. _trackNumbers.Select(at => new PhaseTrack(setup.Tracks[at], patch, format, indexStep, onFault))];
+        _bands = [.. _trackNumbers.Select(at => new PhaseTrack(setup.Tracks[at], patch, format, indexStep, onFault, watched.ElementAtOrDefault(at)))];
     }
 
     internal PhaseTrack BandOf(int track) => _bands[Array.IndexOf(_trackNumbers, track)];

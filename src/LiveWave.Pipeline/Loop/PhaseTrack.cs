@@ -11,10 +11,13 @@ public sealed class PhaseTrack
     private readonly long _indexStep;
     private readonly string _where;
     private readonly Action<string, Exception> _onFault;
+    private readonly PhaseSnapshot? _watched;
     private bool _hasFailed;
 
-    internal PhaseTrack(PhaseTrackSetup setup, PatchSetup patch, StreamFormat format, long indexStep, Action<string, Exception> onFault)
+    internal PhaseTrack(
+        PhaseTrackSetup setup, PatchSetup patch, StreamFormat format, long indexStep, Action<string, Exception> onFault, PhaseSnapshot? watched)
     {
+        _watched = watched;
         _where = $"patch '{patch.Name}', band '{setup.Band.Name}'";
         _onFault = onFault;
         _indexStep = indexStep;
@@ -44,7 +47,9 @@ public sealed class PhaseTrack
     {
         try
         {
-            return wave.Read(frame, now, ref events);
+            var happened = wave.Read(frame, now, ref events);
+            _watched?.Write(_now);
+            return happened;
         }
         catch (Exception error)
         {

@@ -26,6 +26,9 @@ public sealed record RunParts
     /// <summary>The latency budget.</summary>
     public required LatencyLedger Ledger { get; init; }
 
+    /// <summary>Where phasors are shown to whoever looks, one per track of the setup; empty: nobody looks.</summary>
+    public IReadOnlyList<PhaseSnapshot> Watched { get; init; } = [];
+
     /// <summary>Most rows a pull may bring.</summary>
     public int BlockRows { get; init; } = 32;
 

@@ -29,7 +29,7 @@ public sealed class StreamLoop
         ArgumentNullException.ThrowIfNull(parts);
         _setup = setup;
         _parts = parts;
-        _core = new DecisionCore(setup, OnFault);
+        _core = new DecisionCore(setup, OnFault, parts.Watched);
         _repair = new StreamRepair(setup.Format);
         _block = new SampleBlock(setup.Format, parts.BlockRows);
         _rows = new RepairedRows(parts.BlockRows);
