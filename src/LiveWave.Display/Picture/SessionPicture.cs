@@ -90,6 +90,7 @@ internal sealed class SessionPicture
     {
         if (Verdicts.Count == 0 || Verdicts[0].Decision.Number != verdict.Decision.Number) _decided[(int)verdict.Decision.Kind]++;
         Verdicts.Add(verdict);
+        Ledger.Decision(verdict.Outcome.Stages);
         Ledger.Outcome(verdict.Outcome.Stages);
     }
 

@@ -1,5 +1,4 @@
 using LiveWave.Abstractions;
-using LiveWave.Testing;
 
 namespace LiveWave.Pipeline.Tests;
 
