@@ -4,8 +4,8 @@ using System.Text;
 namespace LiveWave.Display;
 
 /// <summary>The terminal the program was started in. While it is open the view has a screen of its own and the cursor is hidden.</summary>
-/// <remarks>What was there before comes back on every end: dispose, exit, unhandled exception, and while the program is suspended.
-/// Only a kill that no program can catch leaves it as it is; then <c>reset</c> helps.</remarks>
+/// <remarks>What was there before comes back on every end: dispose, exit, unhandled exception. Only a kill that no program can catch
+/// leaves it as it is; then <c>reset</c> helps. Ctrl-Z does nothing: a run that is suspended would miss its instants.</remarks>
 public sealed class ConsoleTerminal : ITerminal
 {
     // The other screen, no cursor, and no going on in the next line after the last column.
@@ -30,8 +30,8 @@ public sealed class ConsoleTerminal : ITerminal
         AppDomain.CurrentDomain.UnhandledException += OnUnhandled;
         if (!OperatingSystem.IsWindows())
         {
-            _signals.Add(PosixSignalRegistration.Create(PosixSignal.SIGTSTP, _ => Switch(toOpen: false)));
-            _signals.Add(PosixSignalRegistration.Create(PosixSignal.SIGCONT, _ => Switch(toOpen: true)));
+            _signals.Add(PosixSignalRegistration.Create(PosixSignal.SIGTSTP, static context => context.Cancel = true));
+            _signals.Add(PosixSignalRegistration.Create(PosixSignal.SIGCONT, _ => _wasAway = true));
         }
 
         Switch(toOpen: true);
@@ -44,7 +44,7 @@ public sealed class ConsoleTerminal : ITerminal
     public bool IsScreen { get; }
 
     /// <inheritdoc/>
-    /// <remarks>0 for one call after the program was suspended: the picture must be told anew.</remarks>
+    /// <remarks>0 for one call after the program was stopped and continued: the picture must be told anew.</remarks>
     public (int Columns, int Rows) Size()
     {
         if (_wasAway)
@@ -68,7 +68,7 @@ public sealed class ConsoleTerminal : ITerminal
     {
         lock (_writing)
         {
-            if (IsScreen && !_isOpen) return;   // suspended, or closed by another thread
+            if (IsScreen && !_isOpen) return;   // closed by another thread
             Send(text);
         }
     }
@@ -96,7 +96,6 @@ public sealed class ConsoleTerminal : ITerminal
             if (_isOpen == toOpen) return;
             _isOpen = toOpen;
             Send(toOpen ? Enter : Leave);
-            _wasAway = toOpen;
         }
         finally
         {

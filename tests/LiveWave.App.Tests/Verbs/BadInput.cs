@@ -170,6 +170,15 @@ public sealed class BadInput
     }
 
     [Fact]
+    public void A_view_and_json_on_one_output()
+    {
+        var run = ProgramRun.Of("demo", "--json", "--view", "terminal");
+
+        Assert.Equal(ExitCode.Refused, run.ExitCode);
+        Assert.Contains("--json and --view terminal", run.Error, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void A_recording_that_is_cut_off_is_judged_as_far_as_it_goes_and_the_session_says_so()
     {
         using var bench = new Bench();
