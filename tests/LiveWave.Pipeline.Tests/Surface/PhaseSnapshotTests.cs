@@ -5,6 +5,7 @@ namespace LiveWave.Pipeline.Tests;
 public sealed class PhaseSnapshotTests
 {
     private const int Channels = 60;
+    private const int Many = 4096;   // long copies: a reader without its question would often be caught
 
     [Fact]
     public void A_reader_gets_the_newest_frame_and_its_number()
@@ -24,15 +25,15 @@ public sealed class PhaseSnapshotTests
     [Fact]
     public void A_reader_beside_a_busy_writer_never_gets_half_of_a_frame()
     {
-        var snapshot = new PhaseSnapshot(Channels);
-        var frames = Enumerable.Range(0, 64).Select(Frame).ToArray();
+        var snapshot = new PhaseSnapshot(Many);
+        var frames = Enumerable.Range(0, 64).Select(value => Frame(value, Many)).ToArray();
         var isOver = false;
         var writer = new Thread(() =>
         {
-            for (var i = 0; i < 100_000; i++) snapshot.Write(frames[i % frames.Length]);
+            for (var i = 0; i < 20_000; i++) snapshot.Write(frames[i % frames.Length]);
             Volatile.Write(ref isOver, true);
         });
-        var into = new Phasors(Channels);
+        var into = new Phasors(Many);
         var last = 0L;
 
         writer.Start();
@@ -42,7 +43,8 @@ public sealed class PhaseSnapshotTests
             Assert.True(number >= last);
             last = number;
             Assert.Equal((number - 1) % frames.Length, into.At.Index);
-            for (var i = 0; i < Channels; i++) Assert.Equal((into.At.Index, -into.At.Index), (into.Re[i], into.Im[i]));
+            Assert.Equal(-1, into.Re.IndexOfAnyExcept(into.At.Index));
+            Assert.Equal(-1, into.Im.IndexOfAnyExcept(-into.At.Index));
         }
 
         writer.Join();
@@ -93,9 +95,9 @@ public sealed class PhaseSnapshotTests
 
     private static void Fail(string where, Exception error) => Assert.Fail($"{where}: {error}");
 
-    private static Phasors Frame(int value)
+    private static Phasors Frame(int value, int channels = Channels)
     {
-        var frame = new Phasors(Channels) { At = new RowInstant(value, value, value) };
+        var frame = new Phasors(channels) { At = new RowInstant(value, value, value) };
         frame.Re.Fill(value);
         frame.Im.Fill(-value);
         frame.Validity.Fill(Validity.Bridged);
