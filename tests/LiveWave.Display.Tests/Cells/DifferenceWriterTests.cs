@@ -8,7 +8,7 @@ public sealed class DifferenceWriterTests
     private const int Columns = 17;
     private const int Rows = 5;
 
-    [Property]
+    [Property(Replay = "2026,1201")]
     public bool Told_the_differences_a_screen_shows_each_picture(int seed, byte depth)
     {
         var colours = (ColourDepth)(depth % 4);
